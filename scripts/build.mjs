@@ -1,0 +1,6 @@
+// Builds for production: browser assets, workers, pages.
+import { build, checkNode, loadSettings } from './steps.mjs';
+
+checkNode();
+loadSettings();
+build({ force: true });
