@@ -100,7 +100,7 @@ describe('who may import whom', () => {
     ).toEqual([]);
   });
 
-  test('no feature calls another's changes, actions or components (the factor colours are shared)', () => {
+  test('no feature calls the changes, actions or components of another (the factor colours are shared)', () => {
     expect(
       wrong((one) => {
         const from = featureOf(one.file);
