@@ -90,7 +90,8 @@ export function build({ force = false } = {}) {
   const folder = process.env.HILUM_DIST_DIR || '.next';
   const stamp = join(folder, 'hilum-built');
   const sources = BUILT_FROM.flatMap((path) => filesUnder(path, new Set([join('public', 'map')])));
-  const state = hashOf(sources.filter((path) => existsSync(path)));
+  // The tile address is part of the content security policy, which is fixed when building.
+  const state = `${hashOf(sources.filter((path) => existsSync(path)))} ${process.env.HILUM_TILE_URL ?? ''}`;
   if (!force && marked(stamp) === state) return;
   console.log('Building…');
   run(process.execPath, ['scripts/prepare-assets.mjs']);
