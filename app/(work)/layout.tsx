@@ -1,0 +1,21 @@
+import type { ReactNode } from 'react';
+import { signOut } from '@/features/accounts/actions';
+import { TopBar } from '@/features/accounts/components/top-bar';
+import { requireViewer } from '@/features/accounts/viewer';
+
+/** Everything behind sign-in: one top bar over the page. */
+export default async function WorkLayout({ children }: { children: ReactNode }) {
+  const viewer = await requireViewer();
+  return (
+    <>
+      <a href="#main" className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-white focus:p-3">
+        Skip to the page
+      </a>
+      <TopBar
+        viewer={{ role: viewer.role, name: viewer.name, season: viewer.season, dealershipName: viewer.dealershipName }}
+        signOut={signOut}
+      />
+      {children}
+    </>
+  );
+}
