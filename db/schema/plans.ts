@@ -60,7 +60,7 @@ export const planRows = sqliteTable(
   (table) => [uniqueIndex('plan_row_field_part').on(table.planId, table.fieldId, table.partName)],
 );
 
-/** What happened to a plan, in order: proposed, change asked (with a word), agreed (with a snapshot). */
+/** What happened to a plan, in order: rows set (before and after), proposed, change asked (with a word), agreed (with a snapshot). */
 export const planEvents = sqliteTable(
   'plan_event',
   {
@@ -73,6 +73,8 @@ export const planEvents = sqliteTable(
     verb: text('verb').notNull(),
     word: text('word'),
     planRowId: text('plan_row_id'),
+    /** The plan's revision that this event made: what a writer who read an older one is told has changed since. */
+    revision: integer('revision').notNull().default(0),
     snapshot: text('snapshot', { mode: 'json' }).$type<unknown>(),
   },
   (table) => [index('plan_event_plan').on(table.planId, table.at)],

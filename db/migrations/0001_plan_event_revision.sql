@@ -1,0 +1,1 @@
+ALTER TABLE `plan_event` ADD `revision` integer DEFAULT 0 NOT NULL;
