@@ -1,0 +1,118 @@
+/**
+ * Ordinary kriging with all points (dual form), its variance, and leave-one-out errors without leaving one out.
+ *
+ * C is the covariance of the points, c₀ that of the points with a place. u = C⁻¹1, v = C⁻¹z, β = 1ᵀv / 1ᵀu; with b = v − βu
+ * the estimate is β + c₀ᵀb, so a grid costs one dot product a cell. Leaving point i out errs by bᵢ/Qᵢᵢ with
+ * Q = C⁻¹ − uuᵀ/1ᵀu (Dubrule 1983, Mathematical Geology 15:687-699).
+ */
+import { SAME_SPOT_SQUARE_METERS } from './idw';
+import { choleskyInPlace, inverseDiagonal, solveLowerInPlace, solveUpperInPlace } from './linear-algebra';
+import { type PlanarPoints, type Variogram, variogramShape } from './variogram';
+
+export interface Kriging {
+  points: PlanarPoints;
+  variogram: Variogram;
+  /** Generalised least squares mean β and dual weights b. */
+  mean: number;
+  weights: Float64Array;
+  /** C⁻¹1 and its sum, and the Cholesky factor of C, for the variance. */
+  ones: Float64Array;
+  onesSum: number;
+  factor: Float64Array;
+}
+
+/** Added to the diagonal, as a share of the sill, when nearly coincident points without a nugget make C singular. */
+const JITTERS = [0, 1e-10, 1e-8, 1e-6];
+
+function covariance(variogram: Variogram, distance: number): number {
+  const { model, nugget, partialSill, range } = variogram;
+  return distance === 0 ? nugget + partialSill : partialSill * (1 - variogramShape(model, distance, range));
+}
+
+/** Prepares kriging of points, no two of which coincide. `null` when the system cannot be solved. */
+export function prepareKriging(points: PlanarPoints, variogram: Variogram): Kriging | null {
+  const size = points.x.length;
+  const sill = variogram.nugget + variogram.partialSill;
+  if (size === 0 || !(sill > 0)) return null;
+  for (const jitter of JITTERS) {
+    const factor = new Float64Array(size * size);
+    for (let i = 0; i < size; i++) {
+      for (let j = 0; j < i; j++) {
+        const dx = (points.x[i] as number) - (points.x[j] as number);
+        const dy = (points.y[i] as number) - (points.y[j] as number);
+        factor[i * size + j] = covariance(variogram, Math.sqrt(dx * dx + dy * dy));
+      }
+      factor[i * size + i] = sill * (1 + jitter);
+    }
+    if (!choleskyInPlace(factor, size)) continue;
+    const solve = (right: Float64Array) => solveUpperInPlace(factor, size, solveLowerInPlace(factor, size, right));
+    const ones = solve(new Float64Array(size).fill(1));
+    const values = solve(Float64Array.from(points.value));
+    const onesSum = ones.reduce((sum, one) => sum + one, 0);
+    const mean = values.reduce((sum, one) => sum + one, 0) / onesSum;
+    const weights = values.map((value, i) => value - mean * (ones[i] as number));
+    if (!Number.isFinite(mean) || !weights.every(Number.isFinite)) continue;
+    return { points, variogram, mean, weights, ones, onesSum, factor };
+  }
+  return null;
+}
+
+/** Estimate and kriging variance at one place. A data point gives its own value and 0. */
+export function krigeAt(kriging: Kriging, x: number, y: number): { mean: number; variance: number } {
+  const { points, variogram, factor } = kriging;
+  const size = points.x.length;
+  const near = new Float64Array(size);
+  let mean = kriging.mean;
+  let onesDot = 0;
+  for (let i = 0; i < size; i++) {
+    const dx = x - (points.x[i] as number);
+    const dy = y - (points.y[i] as number);
+    const distance = Math.sqrt(dx * dx + dy * dy);
+    if (distance * distance < SAME_SPOT_SQUARE_METERS) return { mean: points.value[i] as number, variance: 0 };
+    const value = covariance(variogram, distance);
+    near[i] = value;
+    mean += value * (kriging.weights[i] as number);
+    onesDot += value * (kriging.ones[i] as number);
+  }
+  solveLowerInPlace(factor, size, near);
+  let quadratic = 0;
+  for (let i = 0; i < size; i++) quadratic += (near[i] as number) ** 2;
+  const sill = variogram.nugget + variogram.partialSill;
+  return { mean, variance: Math.max(0, sill - quadratic + (1 - onesDot) ** 2 / kriging.onesSum) };
+}
+
+/** Leave-one-out errors, estimate less value, one a point. */
+export function krigingLeaveOneOutErrors(kriging: Kriging): Float64Array {
+  const diagonal = inverseDiagonal(kriging.factor, kriging.points.x.length);
+  return kriging.weights.map(
+    (weight, i) => -weight / ((diagonal[i] as number) - (kriging.ones[i] as number) ** 2 / kriging.onesSum),
+  );
+}
+
+/** Estimates at many places (no variance): `into[k]` for x[k], y[k]. */
+export function krigeMany(kriging: Kriging, x: Float64Array, y: Float64Array, into: Float64Array): void {
+  const { points, variogram, weights, mean } = kriging;
+  const size = points.x.length;
+  const px = points.x;
+  const py = points.y;
+  const { partialSill, range, model } = variogram;
+  const rangeSquared = range * range;
+  for (let k = 0; k < x.length; k++) {
+    const xk = x[k] as number;
+    const yk = y[k] as number;
+    let sum = 0;
+    let exact = -1;
+    for (let i = 0; i < size; i++) {
+      const dx = xk - (px[i] as number);
+      const dy = yk - (py[i] as number);
+      const squared = dx * dx + dy * dy;
+      if (squared < SAME_SPOT_SQUARE_METERS) exact = i;
+      if (model === 'spherical') {
+        if (squared >= rangeSquared) continue;
+        const ratio = Math.sqrt(squared) / range;
+        sum += (weights[i] as number) * (1 - ratio * (1.5 - 0.5 * ratio * ratio));
+      } else sum += (weights[i] as number) * Math.exp(-Math.sqrt(squared) / range);
+    }
+    into[k] = exact >= 0 ? (points.value[exact] as number) : mean + partialSill * sum;
+  }
+}
