@@ -3,6 +3,7 @@ import { dirname } from 'node:path';
 import { type Client, createClient } from '@libsql/client';
 import { drizzle, type LibSQLDatabase } from 'drizzle-orm/libsql';
 import { environment } from '@/lib/env';
+import { oneWriterAtATime } from './one-writer';
 import * as schema from './schema';
 
 export type Database = LibSQLDatabase<typeof schema>;
@@ -20,7 +21,9 @@ const holder = globalThis as unknown as { hilumDatabase?: Opened };
 function open(): Opened {
   const { DATABASE_URL: url, DATABASE_AUTH_TOKEN: authToken } = environment();
   if (url.startsWith('file:')) mkdirSync(dirname(url.slice('file:'.length)) || '.', { recursive: true });
-  const client = createClient({ url, authToken, timeout: 10_000 });
+  const opened = createClient({ url, authToken, timeout: 10_000 });
+  // A libSQL server queues its writers itself.
+  const client = url.startsWith('file:') ? oneWriterAtATime(opened) : opened;
   return { client, database: drizzle(client, { schema }) };
 }
 
