@@ -34,7 +34,8 @@ function lucia(): Lucia {
     sessionExpiresIn: new TimeSpan(30, 'd'),
     sessionCookie: {
       name: 'hilum_session',
-      expires: true,
+      // The cookie outlives the session: a page cannot send a new cookie, so the database alone says when it ends.
+      expires: false,
       attributes: { sameSite: 'lax', path: '/', secure: environment().address.startsWith('https:') },
     },
   });
