@@ -7,7 +7,7 @@ import { gridOverField } from './surface/field-grid';
 import { idwAt, idwLeaveOneOutErrors } from './surface/idw';
 import { type Kriging, krigeAt, krigeMany, krigingLeaveOneOutErrors, prepareKriging } from './surface/kriging';
 import { eastMeters, localProjection, northMeters } from './surface/projection';
-import { fitVariogram, type PlanarPoints, sampleVariogram, type Variogram } from './surface/variogram';
+import { fitVariogram, type PlanarPoints, sampleVariogram, type Variogram, type VariogramModel } from './surface/variogram';
 
 export interface SurfacePoint {
   /** Planar metres. */
@@ -29,6 +29,8 @@ export interface SurfaceOptions {
   method?: 'kriging' | 'idw';
   /** Use this variogram in place of a fitted one. */
   variogram?: Variogram;
+  /** Models to fit; both unless said. */
+  models?: readonly VariogramModel[];
 }
 
 export interface FittedSurface {
@@ -69,7 +71,7 @@ export function fitSurface(points: readonly SurfacePoint[], options: SurfaceOpti
 
   const varies = planar.value.some((value) => value !== planar.value[0]);
   if (varies && options.method !== 'idw' && (size >= FEWEST_FOR_KRIGING || (options.method === 'kriging' && size >= 3))) {
-    const variogram = options.variogram ?? fitVariogram(sampleVariogram(planar));
+    const variogram = options.variogram ?? fitVariogram(sampleVariogram(planar), options.models);
     const kriging = variogram ? prepareKriging(planar, variogram) : null;
     const error = kriging ? rootMeanSquare(krigingLeaveOneOutErrors(kriging)) : Number.NaN;
     if (kriging && Number.isFinite(error) && (options.method === 'kriging' || error < (errorOfMean as number))) {

@@ -8,7 +8,7 @@ import { fitVariogram, sampleVariogram } from '@/features/soil/surface/variogram
  * Meuse data set (Burrough & McDonnell 1998; R packages sp and gstat), natural logarithm of zinc. Reference: gstat 2.1
  * (Pebesma 2004, Computers & Geosciences 30:683-691), all points, spherical, nugget 0.05, partial sill 0.59, range 897 m.
  */
-const rows = parse(readFileSync('tests/published/data/meuse.csv'), { columns: true, comment: '#' }) as Record<string, string>[];
+const rows = parse(readFileSync('tests/published/data/meuse.csv'), { columns: true }) as Record<string, string>[];
 const points: SurfacePoint[] = rows.map((row) => ({ x: Number(row.x), y: Number(row.y), value: Math.log(Number(row.zinc)) }));
 const given = { model: 'spherical', nugget: 0.05, partialSill: 0.59, range: 897 } as const;
 

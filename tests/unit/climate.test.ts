@@ -151,22 +151,28 @@ describe('a daily weather file', () => {
 
   test('a whole leap year is taken as it stands', () => {
     const outcome = climateFromDailyFile(lines(2024, 1, 366), normals);
-    expect(outcome.ok && outcome.value.dailyMaximumC.length).toBe(366);
-    expect(outcome.ok && outcome.value.source).toBe('daily file');
+    expect(outcome.ok && outcome.value.climate.dailyMaximumC.length).toBe(366);
+    expect(outcome.ok && outcome.value.climate.source).toBe('daily file');
   });
 
   test('days that the file lacks come from the normals, and the count is said', () => {
     const outcome = climateFromDailyFile(lines(2025, 100, 300), normals);
     expect(outcome.ok && outcome.notes?.[0]).toContain('164 days of 2025');
-    expect(outcome.ok && outcome.value.dailyMaximumC[20]).toBe(normals.dailyMaximumC[20]);
-    expect(outcome.ok && outcome.value.dailyMaximumC[150]).toBe(25);
+    expect(outcome.ok && outcome.value.climate.dailyMaximumC[20]).toBe(normals.dailyMaximumC[20]);
+    expect(outcome.ok && outcome.value.climate.dailyMaximumC[150]).toBe(25);
+  });
+
+  test('a mild autumn moves the freeze past the last day measured', () => {
+    const outcome = climateFromDailyFile(lines(2025, 100, 320), normals);
+    expect(outcome.ok && outcome.value.climate.firstKillingFreezeDayOfYear).toBe(321);
+    expect(outcome.ok && outcome.value.year).toBe(2025);
   });
 
   test('the freeze of that year is the freeze, without a spread', () => {
     const text = `${lines(2025, 100, 270)}\n2025-10-02,8,-4`;
     const outcome = climateFromDailyFile(text, normals);
-    expect(outcome.ok && outcome.value.firstKillingFreezeDayOfYear).toBe(275);
-    expect(outcome.ok && outcome.value.freezeStandardDeviationDays).toBe(0);
+    expect(outcome.ok && outcome.value.climate.firstKillingFreezeDayOfYear).toBe(275);
+    expect(outcome.ok && outcome.value.climate.freezeStandardDeviationDays).toBe(0);
   });
 
   test.each([

@@ -20,14 +20,19 @@ interface Day {
   minimumC: number;
 }
 
+export interface YearOfWeather {
+  year: number;
+  climate: ClimateForPlace;
+}
+
 /**
  * Reads a daily weather file of one year into a climate. Days that the file does not hold are taken from `normals` and noted.
  * When the file shows an autumn freeze (28 °F, July or later) that day is the freeze, with no year-to-year spread; otherwise
- * the normals' median and spread stand. Fails, with a problem for each wrong row (the first 20), on missing columns, dates
+ * the normals' median and spread stand, the median moved past the file's last day when that is later. Fails, with a problem for each wrong row (the first 20), on missing columns, dates
  * that are no dates, more than one year, the same day twice, temperatures that are no numbers, beyond −60…58 °C or with the
  * minimum above the maximum, and under 30 days.
  */
-export function climateFromDailyFile(text: string, normals: ClimateForPlace): Outcome<ClimateForPlace> {
+export function climateFromDailyFile(text: string, normals: ClimateForPlace): Outcome<YearOfWeather> {
   let rows: Record<string, string>[];
   try {
     rows = parse(text, { columns: true, bom: true, trim: true, skip_empty_lines: true, relax_column_count: true });
@@ -53,7 +58,7 @@ export function climateFromDailyFile(text: string, normals: ClimateForPlace): Ou
   return fromDays(days, year, normals);
 }
 
-function failed(problems: Problem[]): Outcome<ClimateForPlace> {
+function failed(problems: Problem[]): Outcome<YearOfWeather> {
   const rest = problems.length - PROBLEMS_SHOWN;
   return {
     ok: false,
@@ -93,7 +98,7 @@ function readDay(row: Record<string, string>, year: number | null, days: Map<num
   return { index, maximumC, minimumC };
 }
 
-function fromDays(days: Map<number, Day>, year: number, normals: ClimateForPlace): Outcome<ClimateForPlace> {
+function fromDays(days: Map<number, Day>, year: number, normals: ClimateForPlace): Outcome<YearOfWeather> {
   const length = new Date(Date.UTC(year, 1, 29)).getUTCMonth() === 1 ? 366 : 365;
   const dailyMaximumC: number[] = [];
   const dailyMinimumC: number[] = [];
@@ -120,13 +125,16 @@ function fromDays(days: Map<number, Day>, year: number, normals: ClimateForPlace
   return {
     ok: true,
     value: {
-      ...normals,
-      dailyMaximumC,
-      dailyMinimumC,
-      firstKillingFreezeDayOfYear: freezeDay ?? normals.firstKillingFreezeDayOfYear,
-      freezeStandardDeviationDays: freezeDay === null ? normals.freezeStandardDeviationDays : 0,
-      lastSpringFrostDayOfYear: lastFrostDay ?? normals.lastSpringFrostDayOfYear,
-      source: 'daily file',
+      year,
+      climate: {
+        ...normals,
+        dailyMaximumC,
+        dailyMinimumC,
+        firstKillingFreezeDayOfYear: freezeDay ?? Math.max(normals.firstKillingFreezeDayOfYear, Math.max(...days.keys()) + 2),
+        freezeStandardDeviationDays: freezeDay === null ? normals.freezeStandardDeviationDays : 0,
+        lastSpringFrostDayOfYear: lastFrostDay ?? normals.lastSpringFrostDayOfYear,
+        source: 'daily file',
+      },
     },
     notes,
   };
