@@ -1,5 +1,6 @@
 /** The plan as screens, exports and the sheet read it, and the arithmetic of its rows and totals. Pure. */
 import type { MultiPolygon, Polygon } from 'geojson';
+import type { SupplyWord } from '@/features/line-up/model';
 import type { Assessment } from '@/features/placement/engine/model';
 import {
   exactUnits,
@@ -11,8 +12,6 @@ import {
   wholeUnits,
 } from './seed-math';
 import type { PlanState } from './states';
-
-export type SupplyWord = 'available' | 'limited' | 'sold out';
 
 export interface PlanVariety {
   id: string;

@@ -19,7 +19,7 @@ import type { Ranking } from '@/features/placement/engine/model';
 import { NotFoundError } from '@/lib/errors';
 import { type Choice, type PlanEvent, type PlanLine, type PlanLot, type PlanView, totalsOf, type VarietySupply } from './model';
 import { HOLDING_STATES, type PlanState } from './states';
-import { heldByLot, supplyWord } from './supply';
+import { heldByLot, supplyWordFor } from './supply';
 
 export interface Reader {
   /** Prices and supply numbers, unpublished varieties, choices for editing: the dealership's own people only. */
@@ -159,7 +159,7 @@ export async function readPlan(
       const need = totals.varieties.find((one) => one.variety.id === variety.id)?.units ?? 0;
       return {
         varietyId: variety.id,
-        word: supplyWord({ unitsOnHand, heldByOthers, need, limited: variety.release === 'limited' }),
+        word: supplyWordFor({ unitsOnHand, heldByOthers, need, release: variety.release }),
         unitsOnHand: reader.dealershipSide ? unitsOnHand : null,
         unitsHeldByOthers: reader.dealershipSide ? heldByOthers : null,
       };

@@ -2,13 +2,12 @@ import 'server-only';
 import { and, eq, inArray, isNotNull, isNull } from 'drizzle-orm';
 import { database, type Transaction } from '@/db/client';
 import { operations, planRows, plans, seedLots, varieties } from '@/db/schema';
+import { type SupplyWord, supplyWord } from '@/features/line-up/model';
+import type { Release } from '@/features/placement/engine/model';
 import { formatNumber } from '@/lib/format';
-import type { SupplyWord } from './model';
+
 import { exactUnits, SEEDS_PER_UNIT, wholeUnits } from './seed-math';
 import { HOLDING_STATES, type PlanState } from './states';
-
-/** Units under this share of what is on hand are spoken of as limited. */
-const LIMITED_SHARE = 0.1;
 
 export interface Held {
   byVariety: Map<string, number>;
@@ -151,15 +150,14 @@ function sentence(what: string, wanted: number, onHand: number, held: number): s
   return `${formatNumber(wanted)} units of ${what} are asked, ${formatNumber(free)} are free${why}.`;
 }
 
-/** The word a grower sees in place of numbers. */
-export function supplyWord(input: {
+/** The word a grower sees in place of numbers: of what is left for this plan after what other plans hold. */
+export function supplyWordFor(input: {
   unitsOnHand: number | null;
   heldByOthers: number;
   need: number;
-  limited: boolean;
+  release: Release;
 }): SupplyWord {
-  if (input.unitsOnHand === null) return input.limited ? 'limited' : 'available';
+  if (input.unitsOnHand === null) return supplyWord(null, input.release);
   const free = input.unitsOnHand - input.heldByOthers;
-  if (free <= 0 || free < input.need) return 'sold out';
-  return input.limited || free - input.need < LIMITED_SHARE * input.unitsOnHand ? 'limited' : 'available';
+  return free < input.need ? 'sold out' : supplyWord(free, input.release);
 }

@@ -4,8 +4,6 @@ import { planRows } from '@/db/schema';
 import { change } from '@/features/accounts/gate';
 import type { Viewer } from '@/features/accounts/model';
 import { bad, good, NotFoundError, type Outcome } from '@/lib/errors';
-import { planKeySchema, proposalRowsSchema, removeRowSchema, setRowSchema } from '../schemas';
-import { EMPTY_ROW, supplyBook, unitsOf, valuesAfter, wordsOfChange, writeRow } from './row-values';
 import {
   addEvent,
   bumpPlan,
@@ -16,7 +14,9 @@ import {
   type PlanKey,
   rowsOfPlan,
   stepProblem,
-} from './shared';
+} from '../plan-record';
+import { EMPTY_ROW, supplyBook, unitsOf, valuesAfter, wordsOfChange, writeRow } from '../row-values';
+import { planKeySchema, proposalRowsSchema, removeRowSchema, setRowSchema } from '../schemas';
 
 /** Puts one pick on the plan (or replaces the one that is there): the same as setting the row's variety. */
 export function putOnPlan(viewer: Viewer, input: PlanKey & { fieldId: string; varietyId: string; revision: number }) {

@@ -9,9 +9,6 @@ import { bad, good, type Outcome } from '@/lib/errors';
 import { formatAcres, formatBushels, formatNumber } from '@/lib/format';
 import { agreedMail, agreedReceiptMail, changeAskedMail, proposedMail, reopenedMail, withdrawnMail } from '../mails';
 import { figuresOf, lineName, type PlanView } from '../model';
-import { readPlan } from '../read';
-import { agreeSchema, askChangeSchema, commentSchema, proposeSchema, reopenSchema, withdrawSchema } from '../schemas';
-import { shortages } from '../supply';
 import {
   addEvent,
   bumpPlan,
@@ -23,7 +20,10 @@ import {
   type PlanKey,
   type PlanRecord,
   stepProblem,
-} from './shared';
+} from '../plan-record';
+import { readPlan } from '../read';
+import { agreeSchema, askChangeSchema, commentSchema, proposeSchema, reopenSchema, withdrawSchema } from '../schemas';
+import { shortages } from '../supply';
 
 /** Proposes the plan to the grower: refreshes its ledgers, takes the units (first come), and sends mail. */
 export function propose(viewer: Viewer, input: unknown): Promise<Outcome<{ revision: number }>> {

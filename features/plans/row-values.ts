@@ -6,10 +6,10 @@ import type { Viewer } from '@/features/accounts/model';
 import { bad, good, NotFoundError, type Outcome } from '@/lib/errors';
 import { formatNumber } from '@/lib/format';
 import { createId } from '@/lib/ids';
-import type { SetRow } from '../schemas';
-import { exactUnits, SEEDS_PER_UNIT, suggestedSeedsPerAcre, wholeUnits } from '../seed-math';
-import { heldByLot } from '../supply';
-import type { FieldGround, RowRecord } from './shared';
+import type { FieldGround, RowRecord } from './plan-record';
+import type { SetRow } from './schemas';
+import { exactUnits, SEEDS_PER_UNIT, suggestedSeedsPerAcre, wholeUnits } from './seed-math';
+import { heldByLot } from './supply';
 
 type Lot = typeof seedLots.$inferSelect;
 export type RowValues = Pick<

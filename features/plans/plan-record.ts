@@ -19,8 +19,8 @@ import type { Ranking } from '@/features/placement/engine/model';
 import { NotFoundError, type Problem } from '@/lib/errors';
 import { createId } from '@/lib/ids';
 import { queueMail } from '@/lib/mail/outbox';
-import type { EventSnapshot } from '../read';
-import { mayStep, type PlanState, type PlanStep, whyNot } from '../states';
+import type { EventSnapshot } from './read';
+import { mayStep, type PlanState, type PlanStep, whyNot } from './states';
 
 export type PlanRecord = typeof plans.$inferSelect;
 export type RowRecord = typeof planRows.$inferSelect;

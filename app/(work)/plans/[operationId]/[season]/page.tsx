@@ -1,0 +1,131 @@
+import { notFound } from 'next/navigation';
+import { may } from '@/features/accounts/rights';
+import { requireViewer } from '@/features/accounts/viewer';
+import {
+  agreePlan,
+  askPlanChange,
+  commentOnPlan,
+  editRow,
+  fillPlan,
+  makeSheetLink,
+  proposePlan,
+  reopenPlan,
+  revokeSheetLink,
+  takeOffRow,
+  withdrawPlan,
+} from '@/features/plans/actions';
+import { CrewLinks } from '@/features/plans/components/crew-links';
+import { ExportMenu } from '@/features/plans/components/export-menu';
+import { PlanBoard } from '@/features/plans/components/plan-board';
+import { PlanHistory } from '@/features/plans/components/plan-history';
+import { PlanSteps } from '@/features/plans/components/plan-steps';
+import { StateTag } from '@/features/plans/components/state-tag';
+import { planOf, sheetLinksOf } from '@/features/plans/queries';
+import { mayStep } from '@/features/plans/states';
+import { formatMoment } from '@/lib/dates';
+import { NotFoundError } from '@/lib/errors';
+import { LinkButton } from '@/lib/ui/button';
+import { CAUTIONS } from '@/lib/ui/cautions';
+import { Caution, EmptyState, Notice, Page, PageHeader } from '@/lib/ui/page';
+
+interface Props {
+  params: Promise<{ operationId: string; season: string }>;
+}
+
+async function planFor({ params }: Props) {
+  const { operationId, season } = await params;
+  const viewer = await requireViewer();
+  if (!/^20\d\d$/.test(season)) notFound();
+  try {
+    return { viewer, view: await planOf(viewer, operationId, Number(season)) };
+  } catch (error) {
+    if (error instanceof NotFoundError) notFound();
+    throw error;
+  }
+}
+
+export async function generateMetadata(props: Props) {
+  const { view } = await planFor(props);
+  return { title: `${view.season} plan of ${view.operationName}` };
+}
+
+/** The plan of an operation: a row a field, from draft to agreed. */
+export default async function PlanPage(props: Props) {
+  const { viewer, view } = await planFor(props);
+  const { operationId, season } = view;
+  const dealershipSide = may(viewer, 'supply', 'read');
+  const placed = view.lines.filter((line) => line.variety).length;
+  const shared = ['proposed', 'agreed', 'planted', 'harvested'].includes(view.state);
+  return (
+    <Page>
+      <PageHeader
+        trail={[{ label: 'Plans', href: '/plans' }, { label: view.operationName }]}
+        title={`${season} planting plan`}
+        aside={<StateTag state={view.state} />}
+        actions={
+          <div className="no-print flex flex-wrap gap-2">
+            {placed > 0 ? <ExportMenu operationId={operationId} season={season} /> : null}
+            <PlanSteps
+              role={viewer.role}
+              state={view.state}
+              operationId={operationId}
+              season={season}
+              revision={view.revision}
+              placed={placed}
+              actions={{
+                propose: proposePlan,
+                withdraw: withdrawPlan,
+                reopen: reopenPlan,
+                agree: agreePlan,
+                askChange: askPlanChange,
+              }}
+            />
+          </div>
+        }
+      />
+      <div className="flex flex-col gap-6">
+        {view.signedName ? (
+          <Notice kind="good">
+            Agreed by {view.signedName}, {formatMoment(view.signedAt)}. The plan and its ledgers are frozen as agreed.
+          </Notice>
+        ) : null}
+        {viewer.role === 'grower' && view.state === 'draft' && placed > 0 ? (
+          <Notice>Your rep is still working on this plan. You will have mail when it is proposed.</Notice>
+        ) : null}
+        {view.lines.length === 0 ? (
+          <EmptyState
+            title="No fields yet"
+            action={
+              <LinkButton href={`/fields/import?operation=${operationId}`} kind="action">
+                Bring in fields
+              </LinkButton>
+            }
+          >
+            A plan has a row a field. Bring in the boundaries first.
+          </EmptyState>
+        ) : (
+          <PlanBoard
+            view={view}
+            dealershipSide={dealershipSide}
+            editable={may(viewer, 'plan', 'change') && mayStep('edit', view.state, viewer.role)}
+            actions={{ editRow, takeOffRow, fillPlan }}
+          />
+        )}
+        <Caution>
+          {CAUTIONS.yield} {CAUTIONS.treatedSeed} {CAUTIONS.herbicide} Units are rounded up once per seed lot.
+        </Caution>
+        {shared && may(viewer, 'plan', 'share') ? (
+          <CrewLinks
+            links={await sheetLinksOf(viewer, operationId, season)}
+            now={Date.now()}
+            operationId={operationId}
+            season={season}
+            make={makeSheetLink}
+            revoke={revokeSheetLink}
+          />
+        ) : null}
+        <PlanHistory events={view.events} lines={view.lines} operationId={operationId} season={season} comment={commentOnPlan} />
+      </div>
+    </Page>
+  );
+}
