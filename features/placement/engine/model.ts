@@ -114,6 +114,8 @@ export interface FieldProfile {
   bufferPh: number | null;
   /** Named buffer test: 'SMP' | 'Sikora' | 'Mehlich' | 'Adams-Evans' | 'Woodruff'. */
   bufferMethod: string | null;
+  /** Lime the buffer test calls for on the sour part, with the method's name and source; `null`: not worked out. */
+  limeTonsPerAcre: { tons: number | null; method: string; source: string } | null;
   organicMatterPercent: number | null;
   cationExchangeCapacity: number | null;
   carbonatePercent: number | null;
@@ -209,6 +211,11 @@ export interface Question {
   words: string;
 }
 
+/** A question together with how much of the factor's deviation (in logs) comes from not knowing its answer. */
+export interface AskedQuestion extends Question {
+  logDeviation: number;
+}
+
 /** What one factor says of one variety on one field. */
 export interface Kept {
   /** Fraction of yield kept by everything this factor covers: field part × match part. */
@@ -222,7 +229,14 @@ export interface Kept {
   detail: string;
   source: string;
   /** Inputs that were unknown. */
-  asks: Question[];
+  asks: AskedQuestion[];
+  /**
+   * How this variety's match moves, in logs, when what is unknown of the field turns out one deviation worse. Varieties share
+   * that shock, each with its own response: that is what makes a resistant variety's lead firm or shaky.
+   */
+  sharedLogSlope: number;
+  /** The rest of the match deviation, in logs: this variety's own ratings. */
+  ownLogDeviation: number;
   /** Set when the variety must leave the picks. */
   stop: string | null;
 }
@@ -287,13 +301,18 @@ export interface QuestionWorth extends Question {
   narrowsBushels: number;
 }
 
+/** A ranked assessment with the share of draws in which it comes first, 0..1. */
+export interface Pick extends Assessment {
+  hold: number;
+}
+
 export interface Ranking {
   engineVersion: string;
   fieldId: string;
   potential: number;
   potentialSource: Assessment['potentialSource'];
   /** Best first. */
-  picks: (Assessment & { /** Share of draws in which it stays first, 0..1. */ hold: number })[];
+  picks: Pick[];
   stopped: Stopped[];
   fixFirst: FixFirst[];
   /** Most helpful first. */

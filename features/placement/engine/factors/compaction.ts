@@ -1,0 +1,31 @@
+import { answer, type Factor } from '../factor';
+import { askLayer, layerOf } from '../ground/layer';
+import { rootSumSquares } from '../numbers';
+
+/** Compaction: a tight layer takes from every variety alike, up to 8 % at its worst, less under irrigation. Wholly field. */
+export const compaction: Factor = {
+  id: 'compaction',
+  label: 'Compaction',
+  color: 'factor-compaction',
+  needs: ['probeDepthInches', 'penetrometerPsi', 'irrigated'],
+  kept({ site }) {
+    const { c, field } = site;
+    const layer = layerOf(site);
+    const perSeverity = c.layerLoss * (field.irrigated ? c.layerIrrigatedRemains : 1);
+    const loss = layer.severity * perSeverity;
+    return answer({
+      field: 1 - loss,
+      fieldDeviation: rootSumSquares(layer.deviation * perSeverity, c.layerUncertainty * loss) / (1 - loss),
+      reason:
+        layer.severity === 0
+          ? `no layer to speak of: ${layer.words}`
+          : layer.measured
+            ? `tight layer: ${layer.words}`
+            : 'not probed for a tight layer',
+      detail: 'the same for every variety; it also feeds wet feet and sudden death',
+      source:
+        'Cornell, Northeast Region CCA Competency Area 4 (200 and 300 psi); a foot of probe means no layer: common practice',
+      asks: askLayer(layer, perSeverity),
+    });
+  },
+};
