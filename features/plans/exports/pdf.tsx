@@ -10,16 +10,16 @@ import { outlineOf } from './outline';
 import { PdfLedger } from './pdf-ledger';
 
 const FONTS = join(process.cwd(), 'public', 'fonts');
-// Static weights: a variable file would come out in its default weight.
+// Static weights (a variable file comes out in its default weight) as WOFF (glyphs of a WOFF2 file cannot be subset).
 Font.register({
   family: 'Public Sans',
   fonts: [
-    { src: join(FONTS, 'public-sans-latin-400-normal.woff2'), fontWeight: 400 },
-    { src: join(FONTS, 'public-sans-latin-600-normal.woff2'), fontWeight: 600 },
-    { src: join(FONTS, 'public-sans-latin-700-normal.woff2'), fontWeight: 700 },
+    { src: join(FONTS, 'public-sans-latin-400-normal.woff'), fontWeight: 400 },
+    { src: join(FONTS, 'public-sans-latin-600-normal.woff'), fontWeight: 600 },
+    { src: join(FONTS, 'public-sans-latin-700-normal.woff'), fontWeight: 700 },
   ],
 });
-Font.register({ family: 'Bricolage', src: join(FONTS, 'bricolage-grotesque-latin-700-normal.woff2'), fontWeight: 700 });
+Font.register({ family: 'Bricolage', src: join(FONTS, 'bricolage-grotesque-latin-700-normal.woff'), fontWeight: 700 });
 // A variety's code or a lot's number must never be broken.
 Font.registerHyphenationCallback((word) => [word]);
 
@@ -36,12 +36,12 @@ const styles = StyleSheet.create({
   row: { flexDirection: 'row', borderBottomWidth: 0.5, borderBottomColor: LINE, paddingVertical: 4 },
   head: { borderBottomWidth: 1, borderBottomColor: INK, color: MUTE, fontWeight: 600 },
   total: { borderTopWidth: 1, borderTopColor: INK, borderBottomWidth: 0, fontWeight: 700 },
-  cell: { paddingRight: 4 },
-  block: { flexDirection: 'row', gap: 16, borderTopWidth: 1, borderTopColor: INK, paddingTop: 8, paddingBottom: 12 },
+  cell: { paddingRight: 6, paddingLeft: 2 },
+  block: { flexDirection: 'row', gap: 16, borderTopWidth: 1, borderTopColor: INK, paddingTop: 7, paddingBottom: 9 },
   fieldName: { fontFamily: 'Bricolage', fontWeight: 700, fontSize: 14 },
   variety: { fontFamily: 'Bricolage', fontWeight: 700, fontSize: 18, marginTop: 2 },
   facts: { flexDirection: 'row', flexWrap: 'wrap', marginTop: 6 },
-  fact: { width: '33.3%', paddingRight: 8, marginBottom: 6 },
+  fact: { width: '33.3%', paddingRight: 8, marginBottom: 4 },
   factLabel: { color: MUTE, fontSize: 7.5 },
   factValue: { fontWeight: 700, fontSize: 10.5 },
   foot: {
@@ -54,9 +54,7 @@ const styles = StyleSheet.create({
     paddingTop: 5,
     color: MUTE,
     fontSize: 7,
-    flexDirection: 'row',
-    justifyContent: 'space-between',
-    gap: 16,
+    gap: 2,
   },
 });
 
@@ -105,7 +103,10 @@ function FarmHead({ view, farm, lines }: { view: PlanView; farm: string; lines: 
     [formatAcres(totals.acres), `acres, ${totals.fields} ${totals.fields === 1 ? 'field' : 'fields'}`],
     [formatBushels(totals.expectedPerAcre), 'bu/ac expected'],
     [formatNumber(totals.units), 'units'],
-    [from === null || to === null ? '—' : `${formatTenth(from)}–${formatTenth(to)}`, 'RM spread'],
+    [
+      from === null || to === null ? '—' : from === to ? formatTenth(from) : `${formatTenth(from)}–${formatTenth(to)}`,
+      'RM spread',
+    ],
   ];
   return (
     <View>
@@ -180,7 +181,7 @@ function Lots({ lines }: { lines: PlanLine[] }) {
 
 function FieldBlock({ line }: { line: PlanLine }) {
   const figures = figuresOf(line);
-  const outline = outlineOf(line.geometry, 150, 120);
+  const outline = outlineOf(line.geometry, 150, 100);
   const facts: [string, string][] = [
     ['Seeds per acre', formatNumber(line.populationSeedsPerAcre)],
     ['Rows', line.rowWidthInches === null ? '—' : `${line.rowWidthInches} in`],
@@ -192,9 +193,9 @@ function FieldBlock({ line }: { line: PlanLine }) {
   return (
     <View style={styles.block} wrap={false}>
       <View style={{ width: 150 }}>
-        <Svg width={150} height={120} viewBox="0 0 150 120">
+        <Svg width={150} height={108} viewBox="0 0 150 108">
           <Path d={outline.path} fill="#fbf8f0" stroke={INK} strokeWidth={1} fillRule="evenodd" />
-          <Path d={`M4 117h${outline.scaleLength.toFixed(1)}`} stroke={MUTE} strokeWidth={1.5} />
+          <Path d={`M4 106h${outline.scaleLength.toFixed(1)}`} stroke={MUTE} strokeWidth={1.5} />
           <Path d="M144 16V4M141 8L144 4L147 8" stroke={MUTE} strokeWidth={0.8} fill="none" />
         </Svg>
         <Text style={styles.factLabel}>{formatNumber(outline.scaleFeet)} ft, north up</Text>
@@ -237,7 +238,7 @@ function FieldBlock({ line }: { line: PlanLine }) {
 function Foot({ view, madeOn }: { view: PlanView; madeOn: string }) {
   return (
     <View style={styles.foot} fixed>
-      <Text style={{ flex: 1 }}>
+      <Text>
         {CAUTIONS.yield} {CAUTIONS.treatedSeed} {CAUTIONS.herbicide}
       </Text>
       <Text
