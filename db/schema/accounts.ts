@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
+import { index, integer, primaryKey, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
 
 const now = sql`(unixepoch() * 1000)`;
 
@@ -85,13 +85,31 @@ export const passwordResets = sqliteTable(
   (table) => [uniqueIndex('password_reset_token').on(table.tokenHash)],
 );
 
-/** Failed tries by e-mail + network address, and by address alone: slows guessing without locking the owner out. */
-export const signInTries = sqliteTable('sign_in_try', {
-  /** `email|address` or `address`, hashed. */
-  key: text('key').primaryKey(),
-  failures: integer('failures').notNull(),
-  lastFailureAt: integer('last_failure_at').notNull(),
-});
+/** Tries to sign in, by what is counted (lock-out.ts): slows guessing without locking the owner out. */
+export const signInTries = sqliteTable(
+  'sign_in_try',
+  {
+    /** What is counted, hashed. */
+    key: text('key').primaryKey(),
+    failures: integer('failures').notNull(),
+    lastFailureAt: integer('last_failure_at').notNull(),
+  },
+  (table) => [index('sign_in_try_last_failure').on(table.lastFailureAt)],
+);
+
+/** Browsers a person has signed in from: a stranger's guessing never makes their owner wait. */
+export const knownBrowsers = sqliteTable(
+  'known_browser',
+  {
+    /** SHA-256 of the secret in the browser's cookie. */
+    tokenHash: text('token_hash').notNull(),
+    personId: text('person_id')
+      .notNull()
+      .references(() => people.id, { onDelete: 'cascade' }),
+    createdAt: integer('created_at').notNull().default(now),
+  },
+  (table) => [primaryKey({ columns: [table.tokenHash, table.personId] })],
+);
 
 /** Who did what, when: one row a write, made in the same transaction as the write. */
 export const auditEntries = sqliteTable(

@@ -23,8 +23,9 @@ export const RIGHTS = {
   },
   season: { read: ['rep', 'manager'] },
   dealership: { change: ['manager'] },
+  account: { change: ['grower', 'rep', 'manager'] },
   audit: { read: ['manager'] },
-  outbox: { read: ['manager'] },
+  outbox: { read: ['manager'], send: ['manager'] },
 } as const satisfies Record<string, Record<string, readonly Role[]>>;
 
 export type Thing = keyof typeof RIGHTS;

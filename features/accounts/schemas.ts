@@ -1,7 +1,6 @@
 import { z } from 'zod';
 import { ROLES } from './model';
-
-const EASY = ['password', 'passwort', 'qwerty', '12345', 'letmein', 'soybean', 'welcome', 'hilum', 'abc123', 'iloveyou'];
+import { passwordProblem } from './password-rules';
 
 export const emailSchema = z
   .string()
@@ -10,23 +9,11 @@ export const emailSchema = z
   .pipe(z.email('Write an e-mail address like name@farm.example.'))
   .pipe(z.string().max(200, 'This e-mail address is too long.'));
 
-/** At least ten characters and not one that guessers try first. */
-export const passwordSchema = z
-  .string()
-  .min(10, 'Use at least 10 characters. A few unrelated words are easy to keep and hard to guess.')
-  .max(200, 'Use at most 200 characters.')
-  .refine((password) => new Set(password).size >= 5, 'Use at least 5 different characters.')
-  .refine(
-    (password) =>
-      !EASY.some(
-        (word) =>
-          password
-            .toLowerCase()
-            .replace(/[^a-z0-9]/g, '')
-            .replace(/\d+$/, '') === word,
-      ),
-    'This is one of the first passwords a guesser tries. Choose another.',
-  );
+/** A password by the rules of password-rules.ts; that it is not made of the e-mail is checked where the e-mail is known. */
+export const passwordSchema = z.string('Write a password.').superRefine((password, context) => {
+  const problem = passwordProblem(password);
+  if (problem) context.addIssue({ code: 'custom', message: problem });
+});
 
 export const personNameSchema = z.string().trim().min(2, 'Write the name.').max(100, 'Use at most 100 characters.');
 
@@ -68,6 +55,21 @@ export const acceptInvitationSchema = z
   });
 
 export const personIdSchema = z.object({ personId: z.string().min(1) });
+
+export const invitationIdSchema = z.object({ invitationId: z.string().min(1) });
+
+export const dealershipSchema = z.object({
+  name: z.string().trim().min(2, 'Write the name of the dealership.').max(100, 'Use at most 100 characters.'),
+  currentSeason: z.coerce
+    .number('Write the season as a year, like 2027.')
+    .int('Write the season as a year, like 2027.')
+    .min(2000, 'Write the season as a year, like 2027.')
+    .max(2100, 'Write the season as a year, like 2027.'),
+  soybeanPriceDollarsPerBushel: z.coerce
+    .number('Write the price in dollars, like 10.50.')
+    .min(1, 'At least $1 a bushel.')
+    .max(50, 'At most $50 a bushel.'),
+});
 
 export const ownAccountSchema = z.object({ name: personNameSchema, wantsMail: z.boolean() });
 

@@ -56,6 +56,22 @@ export interface SessionCookie {
 }
 
 export const SESSION_COOKIE_NAME = 'hilum_session';
+export const BROWSER_COOKIE_NAME = 'hilum_browser';
+
+/** The cookie by which a browser is known again (lock-out.ts). It signs nobody in. */
+export function browserCookie(token: string): SessionCookie {
+  return {
+    name: BROWSER_COOKIE_NAME,
+    value: token,
+    attributes: {
+      httpOnly: true,
+      sameSite: 'lax',
+      path: '/',
+      secure: environment().address.startsWith('https:'),
+      maxAge: 400 * 86_400,
+    },
+  };
+}
 
 /** Opens a session for a person and answers the cookie that carries it (httpOnly, same-site, secure over https). */
 export async function openSession(personId: string): Promise<SessionCookie> {
