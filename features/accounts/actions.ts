@@ -6,6 +6,7 @@ import { redirect } from 'next/navigation';
 import type { Outcome } from '@/lib/errors';
 import * as dealership from './changes/dealership';
 import * as invitations from './changes/invitations';
+import * as outbox from './changes/outbox';
 import * as own from './changes/own-account';
 import * as people from './changes/people';
 import * as invitation from './invitation';
@@ -120,4 +121,10 @@ export async function changeDealership(_before: FormState, form: FormData): Prom
   const outcome = await dealership.changeDealership(await requireViewer(), Object.fromEntries(form));
   revalidatePath('/settings', 'layout');
   return words(outcome, 'Kept.');
+}
+
+export async function sendMailAgain(_before: FormState, form: FormData): Promise<FormState> {
+  const outcome = await outbox.sendMailAgain(await requireViewer(), Object.fromEntries(form));
+  revalidatePath('/outbox');
+  return words(outcome, 'The mail is in the queue again.');
 }

@@ -1,5 +1,5 @@
 import 'server-only';
-import { and, asc, desc, eq, gt, inArray, isNull, like, lt, type SQL } from 'drizzle-orm';
+import { and, asc, desc, eq, gt, inArray, isNull, like, lt, or, type SQL } from 'drizzle-orm';
 import { database } from '@/db/client';
 import { auditEntries, dealerships, invitations, operationPeople, operations, outboxMails, people } from '@/db/schema';
 import { NotAllowedError } from '@/lib/errors';
@@ -88,10 +88,12 @@ export interface AuditLine {
 }
 
 export interface AuditFilter {
+  /** Start of the verb: 'plan' or 'plan.agreed'. */
   verb?: string;
   personId?: string;
-  /** Entries before this moment, for the next page. */
-  before?: number;
+  operationId?: string;
+  /** Entries older than this one, for the next page. */
+  before?: { at: number; id: string };
   limit?: number;
 }
 
@@ -115,7 +117,13 @@ export async function auditTrail(viewer: Viewer, filter: AuditFilter = {}): Prom
         eq(auditEntries.dealershipId, viewer.dealershipId),
         filter.verb ? like(auditEntries.verb, `${filter.verb.replace(/[%_]/g, '')}%`) : undefined,
         filter.personId ? eq(auditEntries.personId, filter.personId) : undefined,
-        filter.before ? lt(auditEntries.at, filter.before) : undefined,
+        filter.operationId ? eq(auditEntries.operationId, filter.operationId) : undefined,
+        filter.before
+          ? or(
+              lt(auditEntries.at, filter.before.at),
+              and(eq(auditEntries.at, filter.before.at), lt(auditEntries.id, filter.before.id)),
+            )
+          : undefined,
       ),
     )
     .orderBy(desc(auditEntries.at), desc(auditEntries.id))

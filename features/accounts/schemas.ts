@@ -56,6 +56,8 @@ export const acceptInvitationSchema = z
 
 export const personIdSchema = z.object({ personId: z.string().min(1) });
 
+export const mailIdSchema = z.object({ mailId: z.string().min(1) });
+
 export const invitationIdSchema = z.object({ invitationId: z.string().min(1) });
 
 export const dealershipSchema = z.object({

@@ -14,10 +14,19 @@ export interface Mail {
   dedupeKey: string;
 }
 
+// Kept on the process, because Next may load this module more than once.
+const holder = globalThis as unknown as { hilumMailQueued?: () => void };
+
+/** Sets what happens in this process after a mail was queued: the sender wakes. */
+export function onMailQueued(wake: () => void): void {
+  holder.hilumMailQueued = wake;
+}
+
 /** Puts a mail into the outbox, in the transaction that causes it. Without an SMTP address it is kept for /outbox. */
 export async function queueMail(transaction: Transaction, mail: Mail): Promise<void> {
   await transaction
     .insert(outboxMails)
     .values({ id: createId(), ...mail, state: environment().SMTP_URL ? 'queued' : 'kept' })
     .onConflictDoNothing({ target: outboxMails.dedupeKey });
+  holder.hilumMailQueued?.();
 }
