@@ -4,7 +4,7 @@ import type { QuestionWorth } from './model';
 import { NINETIETH } from './numbers';
 
 /** Questions that would narrow the band by less than this are not worth asking, bu/ac. */
-const WORTH_ASKING = 0.02;
+const WORTH_ASKING = 0.005;
 
 function bandWidth(expected: number, logDeviation: number): number {
   return expected * (Math.exp(NINETIETH * logDeviation) - Math.exp(-NINETIETH * logDeviation));

@@ -67,6 +67,3 @@ export function shocksOf(name: string): Float64Array {
   shocksByName.set(name, shocks);
   return shocks;
 }
-
-/** The largest shock that any draw can hold. */
-export const LARGEST_SHOCK = -normalQuantile(0.5 / DRAWS);

@@ -82,6 +82,15 @@ export function siteOf(field: FieldProfile, season: SeasonContext, rules: Placem
     : fullSeasonMaturity(field.latitude, field.longitude, field.elevationFt);
   const shift = latePlantingShift(lateRuleOf(field.state, field.latitude, field.longitude), plantingDay);
   const kept = new Map<string, unknown>();
+  const lines = new Map<number, SeasonLine>();
+  const lineOnTheDay = (relativeMaturity: number) => {
+    let line = lines.get(relativeMaturity);
+    if (!line) {
+      line = rememberedLine(season.climate, season.parameters, relativeMaturity, plantingDate);
+      lines.set(relativeMaturity, line);
+    }
+    return line;
+  };
   const site: Site = {
     field,
     season,
@@ -96,7 +105,10 @@ export function siteOf(field: FieldProfile, season: SeasonContext, rules: Placem
     optimum: fullSeason + shift,
     optimumDeviation: zone ? c.maturityZoneDeviation : c.maturityTableDeviation,
     optimumWords: zone ? `zone ${zone.name}` : `latitude ${field.latitude.toFixed(1)}° N`,
-    line: (relativeMaturity, date = plantingDate) => rememberedLine(season.climate, season.parameters, relativeMaturity, date),
+    line: (relativeMaturity, date = plantingDate) =>
+      date === plantingDate
+        ? lineOnTheDay(relativeMaturity)
+        : rememberedLine(season.climate, season.parameters, relativeMaturity, date),
     once: (key, make) => {
       if (!kept.has(key)) kept.set(key, make(site));
       return kept.get(key) as ReturnType<typeof make>;

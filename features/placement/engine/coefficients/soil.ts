@@ -30,13 +30,13 @@ export const SOIL_COEFFICIENTS = {
     changeable: true,
   },
   waterLossPoorly: {
-    value: 0.08,
+    value: 0.11,
     low: 0.02,
     high: 0.2,
     unit: 'fraction',
     does: 'Yield any variety loses to standing water on poorly drained ground without tile.',
     reason:
-      'Tile on poorly drained ground gives 10–40 % more soybeans (from memory, low confidence); the part that is water, not rot.',
+      'Tile on poorly drained ground gives 10–40 % more soybeans (from memory, low confidence); this much for water makes tile worth 10 %, rot included.',
     changeable: true,
   },
   rotLossPoorly: {

@@ -54,6 +54,7 @@ interface Nematodes {
   loss: number;
   deviation: number;
   unknownDeviation: number;
+  words: string;
 }
 
 function nematodesOf(site: Site): Nematodes {
@@ -71,7 +72,12 @@ function nematodesOf(site: Site): Nematodes {
   const over = expectation(
     counts.map((one) => ({ weight: one.weight, value: Math.min(0.5, along(LOSS_BY_EGGS, one.eggs) * damage) })),
   );
+  const eggs = field.cystEggsPer100cc;
   return {
+    words:
+      eggs === null
+        ? 'nematode eggs not counted'
+        : `${Math.round(eggs).toLocaleString('en-US')} eggs per 100 cc (${eggClass(eggs)})`,
     loss: over.mean,
     unknownDeviation: over.deviation,
     deviation: rootSumSquares(over.deviation, c.cystUncertainty * over.mean),
@@ -112,11 +118,6 @@ export const cystNematode: Factor = {
       const words = "What is this variety's source of cyst nematode resistance: none, PI 88788 or Peking?";
       asks.push(ask('cystNematodeSource', words, (nematodes.loss * remains.deviation) / kept));
     }
-    const eggs = field.cystEggsPer100cc;
-    const counted =
-      eggs === null
-        ? 'nematode eggs not counted'
-        : `${Math.round(eggs).toLocaleString('en-US')} eggs per 100 cc (${eggClass(eggs)})`;
     const sourceWords = source === null ? 'source not said' : source === 'none' ? 'no resistance' : source;
     return answer({
       field: keptBest,
@@ -124,7 +125,7 @@ export const cystNematode: Factor = {
       match,
       sharedSlope: (-nematodes.deviation * Math.max(0, remains.mean - best)) / match,
       ownDeviation,
-      reason: `${counted}, ${sourceWords}`,
+      reason: `${nematodes.words}, ${sourceWords}`,
       detail: source && source === last ? 'the same source as last time' : '',
       source:
         'Tylka, Iowa State (Peking against PI 88788); University of Missouri 2023 (reproduction on PI 88788); Grau, Wisconsin 2001 (pH)',

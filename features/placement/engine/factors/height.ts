@@ -38,7 +38,7 @@ export const height: Factor = {
       sharedSlope: -rootSumSquares(c.shortOnDroughtyLoss * own * dry.indexDeviation, 0.4 * loss) / match,
       ownDeviation,
       reason: `${bushels} bu, ${ground} ground${storage}: ${variety.height ? `${variety.height} plant` : 'height unknown'}`,
-      detail: field.irrigated || dry.index < 0.15 ? 'short plants belong here; tall ones pay through standability' : '',
+      detail: loss < 0.001 ? 'short plants belong here; tall ones pay through standability' : '',
       source: 'Short plants belong on high-yield ground: common practice; height under 24 in on droughty ground: from memory',
       asks,
     });

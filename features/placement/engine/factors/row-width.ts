@@ -106,6 +106,7 @@ export const rowWidth: Factor = {
     const { c } = site;
     const rows = site.once('rows', rowsOf);
     const { bushType } = variety;
+    const { r1 } = site.line(variety.relativeMaturity);
     const { upright, medium, bushy } = rows.kept;
     const keptHere = bushType ? rows.kept[bushType] : (upright + medium + bushy) / 3;
     const match = keptHere / rows.field;
@@ -126,10 +127,8 @@ export const rowWidth: Factor = {
       match,
       sharedSlope: tip * rootSumSquares((c.rowUncertainty * (1 - match)) / match, sharedUnknown),
       ownDeviation: unknownBush,
-      reason: reasonOf(site, variety),
-      detail: site.line(variety.relativeMaturity).r1
-        ? `the canopy should close by first flower, ${formatDay(site.line(variety.relativeMaturity).r1)}`
-        : '',
+      reason: site.once(`rows ${bushType}`, () => reasonOf(site, variety)),
+      detail: r1 ? `the canopy should close by first flower, ${formatDay(r1)}` : '',
       source:
         'Iowa State soybean production (30 trials); Naeve, University of Minnesota; De Bruin & Pedersen 2008; bush type: extension practice, from memory',
       asks,

@@ -73,8 +73,11 @@ export const soilPh: Factor = {
       ownDeviation: chlorosis.ownDeviation,
       reason: reasonOf(acidity),
       detail: [
-        sour ? 'sour ground limits P, Ca, Mg and Mo; the same for every variety, see fix first' : '',
-        alkaline ? `high pH ties up P, B, Fe, Mn and Zn; ${ratingWords('chlorosis rating', variety.ironChlorosis)}` : '',
+        acidity.tested ? '' : 'a usual spread from 5.6 to 7.5 is assumed',
+        acidity.tested && sour ? 'sour ground limits P, Ca, Mg and Mo; the same for every variety, see fix first' : '',
+        acidity.tested && alkaline
+          ? `high pH ties up P, B, Fe, Mn and Zn; ${ratingWords('chlorosis rating', variety.ironChlorosis)}`
+          : '',
       ]
         .filter(Boolean)
         .join('; '),

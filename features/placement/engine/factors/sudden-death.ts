@@ -29,7 +29,7 @@ export const suddenDeath = diseaseFactor({
     const history = byHistory(
       field.suddenDeathHistory,
       0.12,
-      { without: base * range * 0.7, with: (base + c.suddenDeathHistory * (0.7 + 0.15 * risk)) * range },
+      { without: base * range * 0.5, with: (base + c.suddenDeathHistory * (0.7 + 0.15 * risk)) * range },
       { fact: 'suddenDeathHistory', words: 'Has this field had sudden death syndrome?' },
     );
     const ground = wet.wetShare > 0.02 ? `, ${percent(wet.wetShare)} of the field wet` : '';
