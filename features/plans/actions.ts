@@ -54,7 +54,9 @@ export async function takeOffRow(input: Key & { fieldId: string; partName: strin
 export async function fillPlan(input: Key): Promise<EditAnswer> {
   const viewer = await requireViewer();
   return answer(viewer, input, await rows.fillFromPicks(viewer, input), ({ placed, left }) =>
-    left.length === 0 ? `${placed} fields filled.` : `${placed} fields filled. No pick in supply for ${left.join(', ')}.`,
+    left.length === 0
+      ? `${placed} fields filled.`
+      : `${placed} fields filled. Left open, for want of a score or of a pick in supply: ${left.join(', ')}.`,
   );
 }
 

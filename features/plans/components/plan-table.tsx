@@ -1,5 +1,6 @@
 'use client';
 
+import clsx from 'clsx';
 import { Button } from '@/lib/ui/button';
 import { Tag } from '@/lib/ui/page';
 import { Table, Td, Th } from '@/lib/ui/table';
@@ -13,6 +14,15 @@ export interface EditHandlers {
   set: (line: PlanLine, set: Record<string, unknown>) => void;
   remove: (line: PlanLine) => void;
 }
+
+/** Widths of the cells that are edited, so that lists show their choice and numbers do not sprawl. */
+const CELL_WIDTH: Record<string, string> = {
+  field: 'whitespace-nowrap',
+  variety: 'min-w-52',
+  lot: 'min-w-32',
+  rowWidth: 'w-20 min-w-16',
+  population: 'w-24 min-w-20',
+};
 
 interface Props {
   view: PlanView;
@@ -29,11 +39,11 @@ export function PlanTable({ view, dealershipSide, edit }: Props) {
       <thead>
         <tr>
           {columns.map((column) => (
-            <Th key={column.id} numeric={column.numeric} className="px-2.5">
+            <Th key={column.id} numeric={column.numeric} className="px-2">
               {column.label}
             </Th>
           ))}
-          <Th className="px-2.5">State</Th>
+          <Th className="px-2">State</Th>
           {edit ? (
             <Th>
               <span className="sr-only">Take off</span>
@@ -45,11 +55,11 @@ export function PlanTable({ view, dealershipSide, edit }: Props) {
         {view.lines.map((line) => (
           <tr key={`${line.fieldId} ${line.partName}`} className="hover:bg-hull/60">
             {columns.map((column) => (
-              <Td key={column.id} numeric={column.numeric} className="px-2.5 align-middle">
+              <Td key={column.id} numeric={column.numeric} className={clsx('px-2 align-middle', CELL_WIDTH[column.id])}>
                 <Cell column={column} line={line} view={view} edit={edit} place="table" />
               </Td>
             ))}
-            <Td className="px-2.5 align-middle">
+            <Td className="px-2 align-middle">
               <LineState line={line} state={view.state} />
             </Td>
             {edit ? (
@@ -63,7 +73,7 @@ export function PlanTable({ view, dealershipSide, edit }: Props) {
       <tfoot>
         <tr>
           {columns.map((column) => (
-            <Td key={column.id} numeric={column.numeric} className="border-b-0 border-t-2 border-t-ink px-2.5 font-semibold">
+            <Td key={column.id} numeric={column.numeric} className="border-b-0 border-t-2 border-t-ink px-2 font-semibold">
               {column.total?.(view.totals) ?? ''}
             </Td>
           ))}
@@ -109,9 +119,21 @@ export function PlanCards({ view, dealershipSide, edit }: Props) {
                 </div>
                 <dl className="mt-3 grid grid-cols-2 gap-x-4 gap-y-1">
                   {small.map((column) => (
-                    <div key={column.id} className="flex justify-between gap-2 border-b border-line py-1">
+                    <div
+                      key={column.id}
+                      className={clsx(
+                        'flex items-center justify-between gap-2 border-b border-line py-1',
+                        column.id === 'runnerUp' && 'col-span-2',
+                      )}
+                    >
                       <dt className="text-mute">{column.label}</dt>
-                      <dd>{column.text(line, figures) || '—'}</dd>
+                      <dd>
+                        {column.id === 'runnerUp' ? (
+                          <Cell column={column} line={line} view={view} edit={edit} place="card" />
+                        ) : (
+                          column.text(line, figures) || '—'
+                        )}
+                      </dd>
                     </div>
                   ))}
                 </dl>
