@@ -129,23 +129,3 @@ function describe(site: Site): Acidity {
 export function acidityOf(site: Site): Acidity {
   return site.once('acidity', describe);
 }
-
-/** Upper ends of the soil reaction classes, pH to one decimal (USDA Soil Survey Manual, as in the SSSA glossary; first two from memory). */
-const REACTION_CLASSES = [
-  [3.4, 'ultra acid'],
-  [4.4, 'extremely acid'],
-  [5, 'very strongly acid'],
-  [5.5, 'strongly acid'],
-  [6, 'moderately acid'],
-  [6.5, 'slightly acid'],
-  [7.3, 'neutral'],
-  [7.8, 'slightly alkaline'],
-  [8.4, 'moderately alkaline'],
-  [9, 'strongly alkaline'],
-] as const;
-
-/** The soil survey's word for a pH, which is rounded to one decimal first (halves up). */
-export function reactionClass(ph: number): string {
-  const rounded = Math.round(ph * 10 + 1e-9) / 10;
-  return REACTION_CLASSES.find(([upTo]) => rounded <= upTo)?.[1] ?? 'very strongly alkaline';
-}
