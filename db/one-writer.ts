@@ -60,7 +60,7 @@ export function oneWriterAtATime(client: Client, patienceMilliseconds = 30_000):
       if (typeof member !== 'function') return member;
       if (name === 'execute') {
         return (...given: [InStatement]) => {
-          const run = () => (member as Client['execute']).apply(target, given);
+          const run = () => (member as (...all: unknown[]) => ReturnType<Client['execute']>).apply(target, given);
           return isRead(given[0]) ? run() : inTurn(run);
         };
       }

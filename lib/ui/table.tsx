@@ -1,10 +1,24 @@
 import clsx from 'clsx';
 import type { ReactNode, TdHTMLAttributes, ThHTMLAttributes } from 'react';
 
+const STACKED =
+  'max-sm:[&_thead]:sr-only max-sm:[&_tr]:block max-sm:[&_tr]:border-b max-sm:[&_tr]:border-line max-sm:[&_tr]:py-2 max-sm:[&_td]:block max-sm:[&_td]:border-0 max-sm:[&_td]:py-1 max-sm:[&_td]:text-left';
+
 /** A real table on white, ruled by hairlines; scrolls inside its own frame when it must. */
-export function Table({ caption, children, className }: { caption: string; children: ReactNode; className?: string }) {
+export function Table({
+  caption,
+  children,
+  className,
+  stacked = false,
+}: {
+  caption: string;
+  children: ReactNode;
+  className?: string;
+  /** On a phone each row stands as a block, one cell under the other. */
+  stacked?: boolean;
+}) {
   return (
-    <section className={clsx('overflow-x-auto', className)} aria-label={caption}>
+    <section className={clsx('relative overflow-x-auto', stacked && STACKED, className)} aria-label={caption}>
       <table className="w-full border-collapse bg-white text-left">
         <caption className="sr-only">{caption}</caption>
         {children}
