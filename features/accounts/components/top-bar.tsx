@@ -1,12 +1,13 @@
 'use client';
 
 import clsx from 'clsx';
-import Image from 'next/image';
 import Link from 'next/link';
-import { usePathname } from 'next/navigation';
-import { DropdownMenu } from 'radix-ui';
-import { PLACES } from '@/features/accounts/places';
+import { usePathname, useSearchParams } from 'next/navigation';
+import { useEffect, useState } from 'react';
+import { PLACES, type Place } from '@/features/accounts/places';
 import type { Role } from '../model';
+import { AccountMenu } from './account-menu';
+import { Brand } from './brand';
 
 export interface BarViewer {
   role: Role;
@@ -15,122 +16,90 @@ export interface BarViewer {
   dealershipName: string;
 }
 
-const MENU_ITEM =
-  'flex min-h-11 w-full items-center px-4 text-left text-base outline-none data-[highlighted]:bg-bloom-light lg:min-h-9 lg:text-sm';
+export interface BarOperation {
+  id: string;
+  name: string;
+}
 
-/** Logo, places, season and account. On a phone the places are in the menu. */
-export function TopBar({ viewer, signOut }: { viewer: BarViewer; signOut: () => Promise<void> }) {
+/** The operation an address is about: `?operation=ID`, `/growers/ID` or `/plans/ID/…`; `null` when it names none. */
+export function operationInAddress(path: string, asked: string | null): string | null {
+  return asked ?? /^\/(?:growers|plans)\/([^/]+)/.exec(path)?.[1] ?? null;
+}
+
+/** The operation being looked at, kept while pages that name none are visited (a field, the line-up). */
+function useOperationLookedAt(path: string, operations: BarOperation[]): BarOperation | null {
+  const named = operationInAddress(path, useSearchParams().get('operation'));
+  const [last, setLast] = useState<string | null>(null);
+  useEffect(() => {
+    if (named !== null) setLast(named);
+  }, [named]);
+  const id = named ?? last;
+  if (operations.length === 1) return operations[0] ?? null;
+  return operations.find((one) => one.id === id) ?? null;
+}
+
+/** Places that are about one operation keep it in their address. */
+function hrefOf(place: Place, operation: BarOperation | null, season: number): string {
+  if (!operation) return place.href;
+  if (place.href === '/fields') return `/fields?operation=${operation.id}`;
+  if (place.href === '/plans') return `/plans/${operation.id}/${season}`;
+  return place.href;
+}
+
+/** Logo, places, the operation and season being looked at, and the account. On a phone the places are in the menu. */
+export function TopBar({
+  viewer,
+  operations,
+  signOut,
+  showOutbox,
+}: {
+  viewer: BarViewer;
+  operations: BarOperation[];
+  signOut: () => Promise<void>;
+  showOutbox: boolean;
+}) {
   const path = usePathname();
-  const places = PLACES.filter((place) => place.roles.includes(viewer.role));
+  const operation = useOperationLookedAt(path, operations);
+  const places = PLACES.filter((place) => place.roles.includes(viewer.role)).map((place) => ({
+    label: place.label,
+    here: place.match.test(path),
+    href:
+      operations.length > 1 && viewer.role !== 'grower' && place.href === '/plans'
+        ? '/plans'
+        : hrefOf(place, operation, viewer.season),
+  }));
   return (
     <header className="no-print sticky top-0 z-30 bg-hilum text-paper">
       <div className="flex h-14 items-center gap-7 px-4 lg:px-6">
-        <Link href="/" className="flex items-center gap-2 font-display font-bold text-xl">
-          <Image src="/hilum.svg" alt="" width={26} height={26} unoptimized />
-          Hilum
-        </Link>
+        <Brand />
         <nav aria-label="Places" className="hidden h-full items-stretch gap-6 md:flex">
-          {places.map((place) => {
-            const here = place.match.test(path);
-            return (
-              <Link
-                key={place.href}
-                href={place.href}
-                aria-current={here ? 'page' : undefined}
-                className={clsx(
-                  'flex items-center border-b-2 pt-0.5',
-                  here ? 'border-[#b79ad9] text-white' : 'border-transparent text-[#d6cdbd] hover:text-white',
-                )}
-              >
-                {place.label}
-              </Link>
-            );
-          })}
+          {places.map((place) => (
+            <Link
+              key={place.label}
+              href={place.href}
+              aria-current={place.here ? 'page' : undefined}
+              className={clsx(
+                'flex items-center border-y-3 border-t-transparent focus-visible:outline-white',
+                place.here ? 'border-b-bar-bloom text-white' : 'border-b-transparent text-bar-mute hover:text-white',
+              )}
+            >
+              {place.label}
+            </Link>
+          ))}
         </nav>
-        <div className="ml-auto flex items-center gap-4 text-[#d6cdbd]">
-          <span className="hidden sm:inline">
-            {viewer.dealershipName} · {viewer.season} season
-          </span>
-          <AccountMenu viewer={viewer} places={places} path={path} signOut={signOut} />
+        <div className="ml-auto flex min-w-0 items-center gap-4 text-bar-mute lg:gap-6">
+          <p className="truncate text-[0.86rem] lg:text-[0.9rem]">
+            {operation?.name ?? viewer.dealershipName}
+            <span className="max-sm:hidden">
+              <span className="px-2" aria-hidden="true">
+                ·
+              </span>
+              {viewer.season} season
+            </span>
+          </p>
+          <AccountMenu viewer={viewer} places={places} path={path} signOut={signOut} showOutbox={showOutbox} />
         </div>
       </div>
     </header>
-  );
-}
-
-function AccountMenu({
-  viewer,
-  places,
-  path,
-  signOut,
-}: {
-  viewer: BarViewer;
-  places: readonly { label: string; href: string; match: RegExp }[];
-  path: string;
-  signOut: () => Promise<void>;
-}) {
-  const settings =
-    viewer.role === 'manager'
-      ? [
-          { label: 'People', href: '/settings/people' },
-          { label: 'Maturity zones', href: '/settings/zones' },
-          { label: 'Placement rules', href: '/settings/rules' },
-          { label: 'Weather stations', href: '/settings/stations' },
-          { label: 'Audit trail', href: '/settings/audit' },
-        ]
-      : viewer.role === 'rep'
-        ? [{ label: 'People', href: '/settings/people' }]
-        : [];
-  return (
-    <DropdownMenu.Root>
-      <DropdownMenu.Trigger className="flex min-h-11 items-center gap-2 px-1 text-paper" aria-label={`Menu of ${viewer.name}`}>
-        <span className="hidden md:inline">{viewer.name}</span>
-        <svg width="18" height="14" viewBox="0 0 18 14" aria-hidden="true" className="md:hidden">
-          <path d="M0 1h18M0 7h18M0 13h18" stroke="currentColor" strokeWidth="2" />
-        </svg>
-        <svg width="10" height="6" viewBox="0 0 10 6" aria-hidden="true" className="hidden md:block">
-          <path d="M1 1l4 4 4-4" stroke="currentColor" strokeWidth="1.5" fill="none" />
-        </svg>
-      </DropdownMenu.Trigger>
-      <DropdownMenu.Portal>
-        <DropdownMenu.Content align="end" sideOffset={4} className="z-50 min-w-60 border border-ink bg-paper py-1 text-ink">
-          <DropdownMenu.Label className="px-4 py-2 text-mute text-sm">
-            {viewer.name}, {viewer.role}
-            <br />
-            {viewer.dealershipName} · {viewer.season} season
-          </DropdownMenu.Label>
-          <div className="border-line border-t md:hidden">
-            {places.map((place) => (
-              <DropdownMenu.Item key={place.href} asChild>
-                <Link href={place.href} className={clsx(MENU_ITEM, place.match.test(path) && 'font-bold')}>
-                  {place.label}
-                </Link>
-              </DropdownMenu.Item>
-            ))}
-          </div>
-          {settings.length > 0 ? (
-            <div className="border-line border-t">
-              {settings.map((one) => (
-                <DropdownMenu.Item key={one.href} asChild>
-                  <Link href={one.href} className={MENU_ITEM}>
-                    {one.label}
-                  </Link>
-                </DropdownMenu.Item>
-              ))}
-            </div>
-          ) : null}
-          <div className="border-line border-t">
-            <DropdownMenu.Item asChild>
-              <Link href="/settings/account" className={MENU_ITEM}>
-                My account
-              </Link>
-            </DropdownMenu.Item>
-            <DropdownMenu.Item className={clsx(MENU_ITEM, 'cursor-pointer')} onSelect={() => void signOut()}>
-              Sign out
-            </DropdownMenu.Item>
-          </div>
-        </DropdownMenu.Content>
-      </DropdownMenu.Portal>
-    </DropdownMenu.Root>
   );
 }
