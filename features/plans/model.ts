@@ -28,6 +28,8 @@ export interface PlanLot {
   unitSizeSeeds: number;
   /** `null` for a grower: prices are the dealership's. */
   priceCentsPerUnit: number | null;
+  /** On hand less what other plans hold; `null` for a grower. */
+  unitsFree: number | null;
 }
 
 /** One line of the plan: a field or a part of one. `id` is `null` while nothing has been put on it. */

@@ -19,7 +19,7 @@ import type { Ranking } from '@/features/placement/engine/model';
 import { NotFoundError } from '@/lib/errors';
 import { type Choice, type PlanEvent, type PlanLine, type PlanLot, type PlanView, totalsOf, type VarietySupply } from './model';
 import { HOLDING_STATES, type PlanState } from './states';
-import { heldByLot, supplyWordFor } from './supply';
+import { type Held, heldByLot, supplyWordFor } from './supply';
 
 export interface Reader {
   /** Prices and supply numbers, unpublished varieties, choices for editing: the dealership's own people only. */
@@ -109,6 +109,8 @@ export async function readPlan(
   const varietyById = new Map(lineUp.map((variety) => [variety.id, variety]));
   const lotById = new Map(lotRows.map((lot) => [lot.id, lot]));
 
+  const held = await heldByLot(operation.dealershipId, season, plan?.id ?? null, connection);
+
   const lines: PlanLine[] = [];
   for (const field of fieldRows) {
     const own = rows.filter((row) => row.fieldId === field.id).sort((a, b) => a.partName.localeCompare(b.partName));
@@ -133,7 +135,7 @@ export async function readPlan(
               relativeMaturity: variety.relativeMaturity,
             }
           : null,
-        lot: lot ? lotOf(lot, reader) : null,
+        lot: lot ? lotOf(lot, reader, held) : null,
         rowWidthInches: row?.rowWidthInches ?? null,
         populationSeedsPerAcre: row?.populationSeedsPerAcre ?? null,
         locked: row?.locked ?? false,
@@ -146,7 +148,6 @@ export async function readPlan(
     }
   }
 
-  const held = await heldByLot(operation.dealershipId, season, plan?.id ?? null, connection);
   const totals = totalsOf(lines);
   const onPlan = new Set(totals.varieties.map((one) => one.variety.id));
   const lotsOf = (varietyId: string) => lotRows.filter((lot) => lot.varietyId === varietyId && lot.archivedAt === null);
@@ -171,7 +172,7 @@ export async function readPlan(
   if (reader.dealershipSide) {
     for (const field of fieldRows) choices[field.id] = choicesOf(rankings.get(field.id) ?? null, published);
     for (const variety of lineUp) {
-      lots[variety.id] = lotsOf(variety.id).map((lot) => lotOf(lot, reader));
+      lots[variety.id] = lotsOf(variety.id).map((lot) => lotOf(lot, reader, held));
     }
   }
   return {
@@ -193,7 +194,7 @@ export async function readPlan(
   };
 }
 
-function lotOf(lot: typeof seedLots.$inferSelect, reader: Reader): PlanLot {
+function lotOf(lot: typeof seedLots.$inferSelect, reader: Reader, held: Held): PlanLot {
   return {
     id: lot.id,
     lotNumber: lot.lotNumber,
@@ -202,6 +203,7 @@ function lotOf(lot: typeof seedLots.$inferSelect, reader: Reader): PlanLot {
     treatment: lot.treatment,
     unitSizeSeeds: lot.unitSizeSeeds,
     priceCentsPerUnit: reader.dealershipSide ? lot.priceCentsPerUnit : null,
+    unitsFree: reader.dealershipSide ? lot.unitsOnHand - (held.byLot.get(lot.id) ?? 0) : null,
   };
 }
 

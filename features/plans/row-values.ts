@@ -8,8 +8,8 @@ import { formatNumber } from '@/lib/format';
 import { createId } from '@/lib/ids';
 import type { FieldGround, RowRecord } from './plan-record';
 import type { SetRow } from './schemas';
-import { exactUnits, SEEDS_PER_UNIT, suggestedSeedsPerAcre, wholeUnits } from './seed-math';
-import { heldByLot } from './supply';
+import { exactUnits, suggestedSeedsPerAcre } from './seed-math';
+import type { SupplyBook } from './supply-book';
 
 type Lot = typeof seedLots.$inferSelect;
 export type RowValues = Pick<
@@ -28,7 +28,7 @@ export const EMPTY_ROW: RowValues = {
   assessment: null,
 };
 
-/** The row after a change, or the problem with it. A new variety brings its fullest lot and, where unset, width and rate. */
+/** The row after a change, or the problem with it. A new variety brings the lot that covers it and, where unset, width and rate. */
 export async function valuesAfter(
   transaction: Transaction,
   viewer: Viewer,
@@ -36,6 +36,7 @@ export async function valuesAfter(
   field: FieldGround,
   before: RowValues | null,
   set: Partial<SetRow['set']>,
+  book: SupplyBook,
 ): Promise<Outcome<RowValues>> {
   const after: RowValues = { ...(before ?? EMPTY_ROW), ...set };
   if (before === null && set.rowWidthInches === undefined) after.rowWidthInches = field.facts?.rowWidthInches ?? null;
@@ -56,21 +57,22 @@ export async function valuesAfter(
   const lots = (await transaction.select().from(seedLots).where(eq(seedLots.varietyId, variety.id))).filter(
     (lot) => lot.archivedAt === null || lot.id === before?.seedLotId,
   );
+  const rateFor = (lot: Lot | null) =>
+    after.populationSeedsPerAcre ??
+    field.facts?.populationSeedsPerAcre ??
+    suggestedSeedsPerAcre({
+      rowWidthInches: after.rowWidthInches,
+      plantingDate: field.facts?.plantingDate ?? null,
+      germinationPercent: lot?.germinationPercent ?? null,
+    });
   if (chosen && set.seedLotId === undefined) {
-    after.seedLotId = lots.filter((lot) => lot.archivedAt === null).sort((a, b) => b.unitsOnHand - a.unitsOnHand)[0]?.id ?? null;
+    const covering = book.lotCovering(variety.id, (lot) => exactUnits(field.areaAcres, rateFor(lot), lot.unitSizeSeeds));
+    after.seedLotId = (covering ?? book.lotsOf(variety.id)[0])?.id ?? null;
   }
   const lot = lots.find((one) => one.id === after.seedLotId) ?? null;
   if (after.seedLotId && !lot) return bad(`That lot is not one of ${variety.code}.`, 'seedLotId');
 
-  if (after.populationSeedsPerAcre === null) {
-    after.populationSeedsPerAcre =
-      field.facts?.populationSeedsPerAcre ??
-      suggestedSeedsPerAcre({
-        rowWidthInches: after.rowWidthInches,
-        plantingDate: field.facts?.plantingDate ?? null,
-        germinationPercent: lot?.germinationPercent ?? null,
-      });
-  }
+  after.populationSeedsPerAcre = rateFor(lot);
   after.assessment = field.ranking?.picks.find((pick) => pick.varietyId === variety.id) ?? null;
   return good(after);
 }
@@ -105,41 +107,6 @@ export async function writeRow(
   const id = createId();
   await transaction.insert(planRows).values({ id, planId, fieldId: field.id, areaAcres: field.areaAcres, ...values });
   return id;
-}
-
-/** Exact units of a row. */
-export function unitsOf(areaAcres: number, row: RowValues, lotById: Map<string, Lot>): number {
-  const lot = row.seedLotId ? lotById.get(row.seedLotId) : undefined;
-  return exactUnits(areaAcres, row.populationSeedsPerAcre ?? 0, lot?.unitSizeSeeds ?? SEEDS_PER_UNIT);
-}
-
-/** Units still free by variety, less what this plan has already put on its rows; `take` says whether they covered it. */
-export async function supplyBook(transaction: Transaction, viewer: Viewer, season: number, planId: string, rows: RowRecord[]) {
-  const held = await heldByLot(viewer.dealershipId, season, planId, transaction);
-  const lots = (
-    await transaction
-      .select({ lot: seedLots })
-      .from(seedLots)
-      .innerJoin(varieties, eq(varieties.id, seedLots.varietyId))
-      .where(and(eq(varieties.dealershipId, viewer.dealershipId), eq(varieties.season, season)))
-  ).map(({ lot }) => lot);
-  const lotById = new Map(lots.map((lot) => [lot.id, lot]));
-  const free = new Map<string, number>();
-  for (const lot of lots.filter((one) => one.archivedAt === null)) {
-    free.set(lot.varietyId, (free.get(lot.varietyId) ?? 0) + lot.unitsOnHand);
-  }
-  for (const [varietyId, units] of held.byVariety) if (free.has(varietyId)) free.set(varietyId, free.get(varietyId)! - units);
-  const used = new Map<string, number>();
-  const take = (varietyId: string, exact: number): boolean => {
-    const after = (used.get(varietyId) ?? 0) + exact;
-    const limit = free.get(varietyId);
-    if (limit !== undefined && wholeUnits(after) > limit) return false;
-    used.set(varietyId, after);
-    return true;
-  };
-  for (const row of rows)
-    if (row.varietyId) used.set(row.varietyId, (used.get(row.varietyId) ?? 0) + unitsOf(row.areaAcres, row, lotById));
-  return { take, lotById };
 }
 
 /** What changed of a row, before → after, in words. */

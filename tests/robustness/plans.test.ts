@@ -1,7 +1,7 @@
 import { and, eq } from 'drizzle-orm';
 import { describe, expect, test } from 'vitest';
 import { database } from '@/db/client';
-import { outboxMails, planEvents, planRows, plans } from '@/db/schema';
+import { outboxMails, planEvents, planRows, plans, seedLots } from '@/db/schema';
 import { fillFromPicks, removeRow, setRow } from '@/features/plans/changes/rows';
 import { agree, askChange, propose, reopen, withdraw } from '@/features/plans/changes/steps';
 import { planOf, seasonOf } from '@/features/plans/queries';
@@ -197,5 +197,23 @@ describe('the last units', () => {
     expect(Object.keys(totals).sort()).toEqual(['CR 21', 'CR 24']);
     const [stored] = await database().select().from(plans).where(eq(plans.operationId, a));
     expect(stored?.state).toBe('draft');
+  });
+
+  test('filling takes the second lot when the first is used up, and a plan filled so can be proposed', async () => {
+    const world = await aPlanWorld({ scarceUnits: 100 });
+    const { a } = world.operations;
+    await database()
+      .insert(seedLots)
+      .values({
+        id: `second ${a}`,
+        varietyId: world.varieties.early.id,
+        lotNumber: 'CR 21-2',
+        germinationPercent: 90,
+        unitsOnHand: 60,
+      });
+    expect(await fillFromPicks(world.rep, key(a))).toMatchObject({ ok: true, value: { placed: 2 } });
+    const plan = await planOf(world.rep, a, SEASON);
+    expect(plan.lines.map((line) => line.lot?.lotNumber)).toEqual(['CR 21-1', 'CR 21-2']);
+    expect(await propose(world.rep, { ...key(a), revision: plan.revision })).toMatchObject({ ok: true });
   });
 });

@@ -41,6 +41,7 @@ export function aLine(overrides: Partial<PlanLine> & { code?: string } = {}): Pl
       treatment: 'fungicide',
       unitSizeSeeds: 140_000,
       priceCentsPerUnit: 6200,
+      unitsFree: 500,
     },
     rowWidthInches: 15,
     populationSeedsPerAcre: 140_000,

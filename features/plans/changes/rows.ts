@@ -15,8 +15,9 @@ import {
   rowsOfPlan,
   stepProblem,
 } from '../plan-record';
-import { EMPTY_ROW, supplyBook, unitsOf, valuesAfter, wordsOfChange, writeRow } from '../row-values';
+import { EMPTY_ROW, valuesAfter, wordsOfChange, writeRow } from '../row-values';
 import { planKeySchema, proposalRowsSchema, removeRowSchema, setRowSchema } from '../schemas';
+import { openSupplyBook } from '../supply-book';
 
 /** Puts one pick on the plan (or replaces the one that is there): the same as setting the row's variety. */
 export function putOnPlan(viewer: Viewer, input: PlanKey & { fieldId: string; varietyId: string; revision: number }) {
@@ -39,11 +40,12 @@ export function setRow(viewer: Viewer, input: unknown): Promise<Outcome<{ revisi
       const since = await changesSince(transaction, plan, wanted.revision, wanted.fieldId);
       if (since.length > 0) return bad([conflictProblem(since)]);
 
-      const before = (await rowsOfPlan(transaction, plan.id)).find(
-        (row) => row.fieldId === wanted.fieldId && row.partName === wanted.partName,
-      );
+      const rows = await rowsOfPlan(transaction, plan.id);
+      const before = rows.find((row) => row.fieldId === wanted.fieldId && row.partName === wanted.partName);
       if (!before && wanted.partName !== '') throw new NotFoundError('No such part of the field on this plan.');
-      const outcome = await valuesAfter(transaction, viewer, wanted.season, ground, before ?? null, wanted.set);
+      const others = rows.filter((row) => row !== before);
+      const book = await openSupplyBook(transaction, viewer, wanted.season, plan.id, others);
+      const outcome = await valuesAfter(transaction, viewer, wanted.season, ground, before ?? null, wanted.set, book);
       if (!outcome.ok) return outcome;
       const rowId = await writeRow(transaction, plan.id, ground, before ?? null, outcome.value);
       const words = await wordsOfChange(transaction, before ?? EMPTY_ROW, outcome.value);
@@ -123,7 +125,7 @@ export function fillFromPicks(
       const problem = stepProblem(viewer, plan, 'edit');
       if (problem) return bad([problem]);
       const rows = await rowsOfPlan(transaction, plan.id);
-      const book = await supplyBook(transaction, viewer, key.season, plan.id, rows);
+      const book = await openSupplyBook(transaction, viewer, key.season, plan.id, rows);
       const placed: string[] = [];
       const left: string[] = [];
       // Biggest fields first: they have the most to lose by a second choice.
@@ -134,9 +136,9 @@ export function fillFromPicks(
         const before = own[0] ?? null;
         let done = false;
         for (const pick of field.ranking?.picks ?? []) {
-          const outcome = await valuesAfter(transaction, viewer, key.season, field, before, { varietyId: pick.varietyId });
+          const outcome = await valuesAfter(transaction, viewer, key.season, field, before, { varietyId: pick.varietyId }, book);
           if (!outcome.ok) continue;
-          if (!book.take(pick.varietyId, unitsOf(field.areaAcres, outcome.value, book.lotById))) continue;
+          if (!book.take({ ...outcome.value, areaAcres: field.areaAcres })) continue;
           await writeRow(transaction, plan.id, field, before, outcome.value);
           placed.push(`${field.name} ${pick.code}`);
           done = true;
@@ -181,14 +183,18 @@ export function applyProposal(viewer: Viewer, input: unknown): Promise<Outcome<{
       if (since.length > 0) return bad([conflictProblem(since)]);
       const rows = await rowsOfPlan(transaction, plan.id);
       const ground = new Map((await groundOf(transaction, wanted)).map((field) => [field.id, field]));
+      const replaced = new Set(wanted.rows.map((one) => one.fieldId));
+      const standing = rows.filter((row) => row.locked || !replaced.has(row.fieldId));
+      const book = await openSupplyBook(transaction, viewer, wanted.season, plan.id, standing);
       const words: string[] = [];
       for (const one of wanted.rows) {
         const field = ground.get(one.fieldId);
         if (!field) throw new NotFoundError('No such field on this operation.');
         const before = rows.find((row) => row.fieldId === one.fieldId && row.partName === '') ?? null;
         if (before?.locked || before?.varietyId === one.varietyId) continue;
-        const outcome = await valuesAfter(transaction, viewer, wanted.season, field, before, { varietyId: one.varietyId });
+        const outcome = await valuesAfter(transaction, viewer, wanted.season, field, before, { varietyId: one.varietyId }, book);
         if (!outcome.ok) return outcome;
+        book.take({ ...outcome.value, areaAcres: field.areaAcres });
         await writeRow(transaction, plan.id, field, before, outcome.value);
         words.push(`${field.name}: ${(await wordsOfChange(transaction, before ?? EMPTY_ROW, outcome.value))[0]}`);
       }

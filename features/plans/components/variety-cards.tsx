@@ -1,6 +1,6 @@
 import { formatAcres, formatNumber, formatPercent, formatTenth } from '@/lib/format';
 import { Tag } from '@/lib/ui/page';
-import type { PlanView } from '../model';
+import type { LotTotal, PlanView } from '../model';
 
 /** One card a variety on the plan: units by lot against supply. A grower sees the word for supply, not its numbers. */
 export function VarietyCards({ view, dealershipSide }: { view: PlanView; dealershipSide: boolean }) {
@@ -39,8 +39,9 @@ export function VarietyCards({ view, dealershipSide }: { view: PlanView; dealers
               ) : null}
               <ul className="mt-1 text-mute text-[0.92em]">
                 {one.lots.map((lot) => (
-                  <li key={lot.lot?.id ?? 'any'}>
+                  <li key={lot.lot?.id ?? 'any'} className={overLot(lot) ? 'text-rust-deep font-semibold' : undefined}>
                     {lot.lot ? `Lot ${lot.lot.lotNumber}` : 'Any lot'}: {formatNumber(lot.units)} units
+                    {overLot(lot) ? `, ${formatNumber(lot.lot?.unitsFree)} free` : ''}
                     {lot.lot?.treatment ? `, ${lot.lot.treatment}` : ''}
                   </li>
                 ))}
@@ -51,6 +52,10 @@ export function VarietyCards({ view, dealershipSide }: { view: PlanView; dealers
       </ul>
     </section>
   );
+}
+
+function overLot(lot: LotTotal): boolean {
+  return lot.lot !== null && lot.lot.unitsFree !== null && lot.units > lot.lot.unitsFree;
 }
 
 function SupplyBar({ share, held, short }: { share: number; held: number; short: boolean }) {
