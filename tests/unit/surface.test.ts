@@ -141,6 +141,40 @@ describe('every surface', () => {
   });
 });
 
+describe('inverse distance over a whole grid', () => {
+  test.each([3, 20, 155, 500])('of %s points agrees with the sum over all points to a thousandth of a pH unit', (count) => {
+    const list = patterned(count, 40);
+    const fitted = fitSurface([...list, { x: 210, y: 390, value: 6.6 }], { method: 'idw' })!;
+    for (const [columns, rows] of [
+      [90, 40],
+      [37, 61],
+      [5, 7],
+    ] as const) {
+      const grid = { columns, rows, cellMeters: 20, left: 0, top: 800 };
+      const cells = Int32Array.from({ length: columns * rows }, (_, i) => i);
+      fitted.over(grid, cells).forEach((value, cell) => {
+        const x = ((cell % columns) + 0.5) * 20;
+        const y = 800 - (Math.floor(cell / columns) + 0.5) * 20;
+        expect(Math.abs(value - fitted.at(x, y).mean)).toBeLessThan(1e-3);
+      });
+    }
+    // The cell centre that a point lies on has that point's value.
+    expect(fitted.over({ columns: 60, rows: 60, cellMeters: 20, left: 0, top: 800 }, Int32Array.of(20 * 60 + 10))[0]).toBe(6.6);
+  });
+
+  test('kriging from its table agrees with kriging place by place to a millionth', () => {
+    for (const model of ['spherical', 'exponential'] as const) {
+      const variogram = { model, nugget: 0.02, partialSill: 0.1, range: 120 };
+      const fitted = fitSurface(patterned(60), { method: 'kriging', variogram })!;
+      const xs = Float64Array.from({ length: 50 }, (_, i) => i * 9 + 0.37);
+      const ys = Float64Array.from({ length: 50 }, (_, i) => 400 - i * 7);
+      fitted.many(xs, ys).forEach((value, k) => {
+        expect(value).toBeCloseTo(fitted.at(xs[k]!, ys[k]!).mean, 5);
+      });
+    }
+  });
+});
+
 describe('a surface over a field', () => {
   const points = (spread: number) =>
     patterned(36).map(({ x, y, value }) => ({

@@ -1,5 +1,6 @@
 /** A grid of square cells over a field: which cells lie inside the boundary, holes left out. */
 import type { MultiPolygon, Polygon, Position } from 'geojson';
+import type { CellGrid } from './idw-grid';
 import { eastMeters, type LocalProjection, localProjection, northMeters } from './projection';
 
 const CELL_METERS = 20;
@@ -7,17 +8,12 @@ export const MAXIMUM_CELLS = 40_000;
 /** A small field gets finer cells, so that its shares are not those of a dozen squares. */
 const FEWEST_CELLS = 100;
 
-export interface FieldGrid {
+export interface FieldGrid extends CellGrid {
   projection: LocalProjection;
   /** West, south, east, north of the grid, degrees. */
   bounds: [number, number, number, number];
-  columns: number;
-  rows: number;
-  cellMeters: number;
-  /** Cells inside, as row × columns + column, rows from north to south; and their centres in planar metres. */
+  /** Cells inside, as row × columns + column, rows from north to south. */
   inside: Int32Array;
-  x: Float64Array;
-  y: Float64Array;
 }
 
 function ringsOf(geometry: Polygon | MultiPolygon): Position[][] {
@@ -63,12 +59,6 @@ export function gridOverField(geometry: Polygon | MultiPolygon): FieldGrid | nul
     }
   }
   if (inside.length === 0) inside.push(Math.floor(rows / 2) * columns + Math.floor(columns / 2));
-  const x = new Float64Array(inside.length);
-  const y = new Float64Array(inside.length);
-  inside.forEach((cell, index) => {
-    x[index] = left + ((cell % columns) + 0.5) * cellMeters;
-    y[index] = top - (Math.floor(cell / columns) + 0.5) * cellMeters;
-  });
   const halfEast = (columns * cellMeters) / 2 / projection.metersPerDegreeEast;
   const halfNorth = (rows * cellMeters) / 2 / projection.metersPerDegreeNorth;
   return {
@@ -82,9 +72,9 @@ export function gridOverField(geometry: Polygon | MultiPolygon): FieldGrid | nul
     columns,
     rows,
     cellMeters,
+    left,
+    top,
     inside: Int32Array.from(inside),
-    x,
-    y,
   };
 }
 
