@@ -88,8 +88,8 @@ export interface AuditLine {
 }
 
 export interface AuditFilter {
-  /** Start of the verb: 'plan' or 'plan.agreed'. */
-  verb?: string;
+  /** How the verb begins, any of these: 'plan.', 'sheet.'. */
+  verbs?: readonly string[];
   personId?: string;
   operationId?: string;
   /** Entries older than this one, for the next page. */
@@ -115,7 +115,9 @@ export async function auditTrail(viewer: Viewer, filter: AuditFilter = {}): Prom
     .where(
       and(
         eq(auditEntries.dealershipId, viewer.dealershipId),
-        filter.verb ? like(auditEntries.verb, `${filter.verb.replace(/[%_]/g, '')}%`) : undefined,
+        filter.verbs && filter.verbs.length > 0
+          ? or(...filter.verbs.map((beginning) => like(auditEntries.verb, `${beginning.replace(/[%_]/g, '')}%`)))
+          : undefined,
         filter.personId ? eq(auditEntries.personId, filter.personId) : undefined,
         filter.operationId ? eq(auditEntries.operationId, filter.operationId) : undefined,
         filter.before

@@ -17,12 +17,12 @@ const LEDGER = [
 
 const STEPS = [
   {
-    who: 'Grower',
+    who: 'The grower',
     what: 'brings field boundaries and soil tests',
     gives: 'Acres measured on the ellipsoid, faults in the file named, pH mapped over each field.',
   },
   {
-    who: 'Grower',
+    who: 'The grower',
     what: 'says how each field is farmed',
     gives: 'What is unknown stays unknown and widens the band; nothing is guessed in silence.',
   },
@@ -32,17 +32,17 @@ const STEPS = [
     gives: 'Each pick opens a ledger in bushels, every line with its reason and its source.',
   },
   {
-    who: 'Grower',
+    who: 'The grower',
     what: 'sees what to fix first',
     gives: 'Lime, a tight layer, drainage: what costs the field bushels whatever is planted.',
   },
   {
-    who: 'Rep',
+    who: 'The rep',
     what: 'proposes a plan within supply',
     gives: 'Rates, units and seed lots follow from the picks. The grower agrees, or asks for a change.',
   },
   {
-    who: 'Crew',
+    who: 'The crew',
     what: 'opens one link on a phone',
     gives: 'Field, variety, rate, population, tag check. No account, nothing else.',
   },
@@ -82,7 +82,7 @@ export function Landing() {
                   <span className="block font-normal text-mute">from its own yields, its goal, or its county</span>
                 </th>
                 <td className="w-8 py-3 text-right text-leaf font-bold">
-                  <span aria-hidden="true">＋</span>
+                  <span aria-hidden="true">+</span>
                   <span className="sr-only">added</span>
                 </td>
               </tr>
@@ -111,7 +111,7 @@ export function Landing() {
                   </span>
                 </th>
                 <td className="w-8 pt-3 text-right font-bold">
-                  <span aria-hidden="true">＝</span>
+                  <span aria-hidden="true">=</span>
                   <span className="sr-only">the sum</span>
                 </td>
               </tr>
@@ -125,11 +125,15 @@ export function Landing() {
             A season, from the boundary file to the planter
           </h2>
           <ol className="mt-7 grid border-ink border-t-2 lg:grid-cols-2 lg:gap-x-16">
-            {STEPS.map((step) => (
-              <li key={step.what} className="grid grid-cols-[5rem_1fr] gap-x-4 border-line border-b py-4">
-                <span className="font-semibold text-bloom">{step.who}</span>
+            {STEPS.map((step, index) => (
+              <li key={step.what} className="grid grid-cols-[2.5rem_1fr] gap-x-4 border-line border-b py-5">
+                <span aria-hidden="true" className="font-bold font-display text-[2rem] text-bloom leading-none">
+                  {index + 1}
+                </span>
                 <span>
-                  <span className="block font-display font-bold text-lg leading-snug">{step.what}</span>
+                  <span className="block font-bold font-display text-lg leading-snug">
+                    {step.who} {step.what}
+                  </span>
                   <span className="mt-1 block text-mute">{step.gives}</span>
                 </span>
               </li>
