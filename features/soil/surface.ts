@@ -110,11 +110,16 @@ function krigedSurface(kriging: Kriging, leaveOneOutRmse: number): MethodPart {
     leaveOneOutRmse,
     at: (x, y) => krigeAt(kriging, x, y),
     many,
-    over: ({ columns, cellMeters, left, top }, cells) =>
-      many(
-        Float64Array.from(cells, (cell) => left + ((cell % columns) + 0.5) * cellMeters),
-        Float64Array.from(cells, (cell) => top - (Math.floor(cell / columns) + 0.5) * cellMeters),
-      ),
+    over: ({ columns, cellMeters, left, top }, cells) => {
+      const x = new Float64Array(cells.length);
+      const y = new Float64Array(cells.length);
+      for (let k = 0; k < cells.length; k++) {
+        const row = Math.floor((cells[k] as number) / columns);
+        x[k] = left + ((cells[k] as number) - row * columns + 0.5) * cellMeters;
+        y[k] = top - (row + 0.5) * cellMeters;
+      }
+      return many(x, y);
+    },
   };
 }
 
@@ -127,7 +132,9 @@ function idwSurface(points: PlanarPoints): MethodPart {
     many: (x, y) => x.map((xk, k) => idwAt(points, xk, y[k] as number)),
     over: (grid, cells) => {
       const all = idwOverGrid(points, grid);
-      return Float64Array.from(cells, (cell) => all[cell] as number);
+      const values = new Float64Array(cells.length);
+      for (let k = 0; k < cells.length; k++) values[k] = all[cells[k] as number] as number;
+      return values;
     },
   };
 }

@@ -2,6 +2,11 @@
 import { BadInput, type Command } from './command';
 
 const COMMANDS: Record<string, { summary: string; load(): Promise<Command> }> = {
+  acres: { summary: 'acres of every field in a boundary file', load: async () => (await import('./acres')).acresCommand },
+  place: {
+    summary: 'rank a line-up on every field, with ledgers and reasons',
+    load: async () => (await import('./place')).placeCommand,
+  },
   'season-line': {
     summary: 'stages of a variety at a place, and what a freeze would cost',
     load: async () => (await import('./season-line')).seasonLineCommand,
