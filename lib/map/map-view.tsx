@@ -126,13 +126,15 @@ function label(one: { label?: string; sublabel?: string }): HTMLElement {
   const element = document.createElement('div');
   element.className =
     'pointer-events-none text-center leading-tight text-[13px] text-ink [text-shadow:0_0_3px_#fbf8f0,0_0_3px_#fbf8f0,0_0_6px_#fbf8f0]';
+  element.style.fontFamily = 'var(--font-sans)';
   const name = document.createElement('div');
-  name.className = 'font-display font-bold';
+  name.className = 'font-bold';
+  name.style.fontFamily = 'var(--font-display)';
   name.textContent = one.label ?? '';
   element.append(name);
   if (one.sublabel) {
     const under = document.createElement('div');
-    under.className = 'text-[12px]';
+    under.className = 'text-[12px] whitespace-nowrap';
     under.textContent = one.sublabel;
     element.append(under);
   }
@@ -218,13 +220,21 @@ export function MapView(props: MapViewProps) {
     (map.getSource('polygons') as maplibre.GeoJSONSource).setData(polygonFeatures(polygons, selectedId));
     (map.getSource('points') as maplibre.GeoJSONSource).setData(pointFeatures(points));
     for (const marker of markers.current) marker.remove();
+    const crowded = polygons.filter((one) => one.label).map((one) => ({ element: label(one), bounds: boundsOf([one.geometry]) }));
+    /** A label wider than its field would lie over the neighbour's: its second line goes first, then all of it. */
+    const thin = () => {
+      for (const { element, bounds } of crowded) {
+        const width = map.project([bounds[2], bounds[1]]).x - map.project([bounds[0], bounds[1]]).x;
+        element.style.visibility = width < 34 ? 'hidden' : '';
+        if (element.children[1]) (element.children[1] as HTMLElement).style.display = width < 92 ? 'none' : '';
+      }
+    };
+    thin();
+    map.on('zoom', thin);
     markers.current = [
-      ...polygons
-        .filter((one) => one.label)
-        .map((one) => {
-          const [west, south, east, north] = boundsOf([one.geometry]);
-          return new maplibre.Marker({ element: label(one) }).setLngLat([(west + east) / 2, (south + north) / 2]).addTo(map);
-        }),
+      ...crowded.map(({ element, bounds: [west, south, east, north] }) =>
+        new maplibre.Marker({ element }).setLngLat([(west + east) / 2, (south + north) / 2]).addTo(map),
+      ),
       ...points
         .filter((one) => one.label)
         .map((one) =>
