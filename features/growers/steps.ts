@@ -97,7 +97,13 @@ function planNext(progress: OperationProgress, season: number): Step['next'] {
   return label === null ? null : { label, href: `/plans/${progress.id}/${season}` };
 }
 
-/** The first thing to do; `null` when the season's work is done. Soil tests and facts do not hold up what comes after them. */
-export function nextThing(steps: Step[]): { label: string; href: string } | null {
-  return steps.find((step) => step.next !== null)?.next ?? null;
+/**
+ * The first thing to do; `null` when the season's work is done. Soil tests and facts that are there for some fields do not
+ * hold up the picks and the plan: what is unknown widens the band. They are named when nothing else is left.
+ */
+export function nextThing(progress: OperationProgress, season: number): { label: string; href: string } | null {
+  const open = stepsOf(progress, season).filter((step) => step.next !== null);
+  const begun = (step: Step) =>
+    (step.key === 'soil' && progress.fieldsWithSoilTests > 0) || (step.key === 'facts' && progress.fieldsWithFacts > 0);
+  return (open.find((step) => !begun(step)) ?? open[0])?.next ?? null;
 }

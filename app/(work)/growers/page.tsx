@@ -29,11 +29,11 @@ export default async function GrowersPage({ searchParams }: { searchParams: Prom
       <PageHeader
         title={showArchived ? 'Archived growers' : 'Growers'}
         aside={
-          <>
+          <div className="flex gap-8 max-sm:w-full">
             <Figure value={operations.length} label={operations.length === 1 ? 'operation' : 'operations'} />
             <Figure value={formatAcres(acres)} label="acres" />
             <Figure value={agreed} label={`${viewer.season} ${agreed === 1 ? 'plan' : 'plans'} agreed`} />
-          </>
+          </div>
         }
       />
       <div className="grid items-start gap-6 lg:grid-cols-[minmax(0,1fr)_20rem]">

@@ -6,9 +6,9 @@ import { SelectField, TextField } from '@/lib/ui/form';
 import type { Role } from '../model';
 
 const ROLE_WORDS: Record<Role, string> = {
-  grower: 'Grower: one operation’s fields, soil tests and plans',
-  rep: 'Rep: the line-up and the growers assigned to them',
-  manager: 'Manager: the whole dealership',
+  grower: 'Sees one operation: its fields, soil tests and plans.',
+  rep: 'Keeps the line-up and serves the growers assigned to them.',
+  manager: 'Runs the whole dealership.',
 };
 
 /** Invites a person by mail. With `operationId` it is a grower of that operation; otherwise role and operation are chosen. */
@@ -32,6 +32,7 @@ export function InviteForm({
           {!operationId && roles.length > 1 ? (
             <SelectField
               label="Role"
+              hint={ROLE_WORDS[role]}
               name="role"
               value={role}
               onChange={(event) => setRole(event.target.value as Role)}
@@ -39,7 +40,7 @@ export function InviteForm({
             >
               {roles.map((one) => (
                 <option key={one} value={one}>
-                  {ROLE_WORDS[one]}
+                  {one}
                 </option>
               ))}
             </SelectField>

@@ -74,7 +74,7 @@ export function GrowersTable({
       <tbody>
         {operations.map((one) => {
           const steps = stepsOf(one, season);
-          const next = nextThing(steps);
+          const next = nextThing(one, season);
           return (
             <tr key={one.id} className="relative hover:bg-hull/60">
               <Td>
@@ -87,6 +87,9 @@ export function GrowersTable({
                 <span className="block text-mute">
                   {[one.county, one.state].filter(Boolean).join(', ')}
                   {one.reps.length > 0 ? ` · ${one.reps.map((rep) => rep.name).join(', ')}` : ' · no rep'}
+                </span>
+                <span className="mt-1 block lg:hidden">
+                  <StepMarks steps={steps} />
                 </span>
               </Td>
               <Td numeric className={HIDDEN.acres}>

@@ -31,7 +31,7 @@ export function OperationForm({
             autoComplete="off"
             error={problemFor(state, 'name')}
           />
-          <div className="grid grid-cols-[6.5rem_1fr] gap-3">
+          <div className="grid grid-cols-[8rem_1fr] gap-3">
             <SelectField label="State" name="state" defaultValue={operation?.state ?? ''} error={problemFor(state, 'state')}>
               <option value="">Not said</option>
               {STATE_CODES.map((code) => (

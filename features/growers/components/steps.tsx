@@ -23,9 +23,9 @@ export function StepMarks({ steps }: { steps: Step[] }) {
   );
 }
 
-/** Each step with what is there and the next thing to do. */
-export function StepList({ steps }: { steps: Step[] }) {
-  const first = steps.find((step) => step.next !== null);
+/** Each step with what is there and the next thing to do; the one of `nextHref` stands out. */
+export function StepList({ steps, nextHref }: { steps: Step[]; nextHref: string | null }) {
+  const first = steps.find((step) => step.next !== null && step.next.href === nextHref);
   return (
     <ol className="border-ink border-t-2 bg-white">
       {steps.map((step, index) => (

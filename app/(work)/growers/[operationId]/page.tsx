@@ -19,7 +19,7 @@ import { OperationForm } from '@/features/growers/components/operation-form';
 import { PeopleList } from '@/features/growers/components/people-list';
 import { StepList } from '@/features/growers/components/steps';
 import { farmsOf, progressOfOperation } from '@/features/growers/queries';
-import { stepsOf } from '@/features/growers/steps';
+import { nextThing, stepsOf } from '@/features/growers/steps';
 import { formatMoment } from '@/lib/dates';
 import { formatAcres } from '@/lib/format';
 import { found } from '@/lib/found';
@@ -79,7 +79,7 @@ export default async function GrowerPage({ params }: { params: Promise<{ operati
             <h2 id="how-far" className="mb-3 text-xl">
               How far the {viewer.season} season is
             </h2>
-            <StepList steps={stepsOf(operation, viewer.season)} />
+            <StepList steps={stepsOf(operation, viewer.season)} nextHref={nextThing(operation, viewer.season)?.href ?? null} />
             <p className="mt-2 text-mute">Last change {formatMoment(operation.lastActivityAt)}.</p>
           </section>
           <section aria-labelledby="farms">
