@@ -7,7 +7,7 @@ import { settingsOf } from '@/features/accounts/places';
 import type { BarViewer } from './top-bar';
 
 const ITEM =
-  'flex min-h-11 w-full items-center px-4 text-left text-base outline-none data-[highlighted]:bg-bloom-light lg:min-h-9 lg:text-sm';
+  'flex min-h-11 w-full items-center border-l-4 border-transparent px-4 text-left text-base outline-none data-[highlighted]:bg-bloom-light lg:min-h-9 lg:text-sm';
 
 /** Who is signed in, the settings open to them and sign out; on a phone the places too. */
 export function AccountMenu({
@@ -55,7 +55,7 @@ export function AccountMenu({
           <DropdownMenu.Group className="border-line border-t py-1 md:hidden">
             {places.map((place) => (
               <DropdownMenu.Item key={place.label} asChild>
-                <Link href={place.href} className={clsx(ITEM, place.here && 'border-bloom border-l-4 font-bold')}>
+                <Link href={place.href} className={clsx(ITEM, place.here && 'border-l-bloom font-bold')}>
                   {place.label}
                 </Link>
               </DropdownMenu.Item>
@@ -64,7 +64,7 @@ export function AccountMenu({
           <DropdownMenu.Group className="border-line border-t py-1">
             {settings.map((one) => (
               <DropdownMenu.Item key={one.href} asChild>
-                <Link href={one.href} className={clsx(ITEM, path === one.href && 'border-bloom border-l-4 font-bold')}>
+                <Link href={one.href} className={clsx(ITEM, path === one.href && 'border-l-bloom font-bold')}>
                   {one.label}
                 </Link>
               </DropdownMenu.Item>

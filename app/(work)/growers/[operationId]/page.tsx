@@ -47,13 +47,13 @@ export default async function GrowerPage({ params }: { params: Promise<{ operati
         ]}
         title={operation.name}
         aside={
-          <>
+          <div className="flex gap-8 max-sm:w-full">
             <Figure
               value={formatAcres(operation.areaAcres)}
               label={`acres, ${operation.fieldCount} ${operation.fieldCount === 1 ? 'field' : 'fields'}`}
             />
             <Figure value={farms.length} label={farms.length === 1 ? 'farm' : 'farms'} />
-          </>
+          </div>
         }
         actions={
           <>
@@ -80,7 +80,9 @@ export default async function GrowerPage({ params }: { params: Promise<{ operati
               How far the {viewer.season} season is
             </h2>
             <StepList steps={stepsOf(operation, viewer.season)} nextHref={nextThing(operation, viewer.season)?.href ?? null} />
-            <p className="mt-2 text-mute">Last change {formatMoment(operation.lastActivityAt)}.</p>
+            {operation.lastActivityAt === null ? null : (
+              <p className="mt-2 text-mute">Last change {formatMoment(operation.lastActivityAt)}.</p>
+            )}
           </section>
           <section aria-labelledby="farms">
             <h2 id="farms" className="mb-3 text-xl">
