@@ -166,8 +166,8 @@ describe('inverse distance over a whole grid', () => {
     for (const model of ['spherical', 'exponential'] as const) {
       const variogram = { model, nugget: 0.02, partialSill: 0.1, range: 120 };
       const fitted = fitSurface(patterned(60), { method: 'kriging', variogram })!;
-      const xs = Float64Array.from({ length: 50 }, (_, i) => i * 9 + 0.37);
-      const ys = Float64Array.from({ length: 50 }, (_, i) => 400 - i * 7);
+      const xs = Float64Array.from({ length: 2000 }, (_, i) => i * 0.225 + 0.37);
+      const ys = Float64Array.from({ length: 2000 }, (_, i) => 400 - i * 0.17);
       fitted.many(xs, ys).forEach((value, k) => {
         expect(value).toBeCloseTo(fitted.at(xs[k]!, ys[k]!).mean, 5);
       });

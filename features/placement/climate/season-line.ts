@@ -111,6 +111,19 @@ export function stageDays(climate: ClimateForPlace, row: MaturityGroupRow, plant
   return stages;
 }
 
+const datesByYear = new Map<number, string[]>();
+
+/** `isoDateOfDay`, remembered: a field asks for the same few hundred dates thousands of times. */
+function rememberedDate(year: number, day: number): string {
+  let dates = datesByYear.get(year);
+  if (!dates) {
+    dates = [];
+    datesByYear.set(year, dates);
+  }
+  dates[day] ??= isoDateOfDay(year, day);
+  return dates[day] as string;
+}
+
 export interface SeasonLineInput {
   climate: ClimateForPlace;
   relativeMaturity: number;
@@ -131,7 +144,7 @@ export function seasonLine({ climate, relativeMaturity, plantingDate, parameters
   if (!Number.isFinite(relativeMaturity)) throw new RangeError(`Relative maturity is not a number: ${relativeMaturity}`);
   const year = Number(plantingDate.slice(0, 4));
   const stages = stageDays(climate, coefficientsOf(relativeMaturity, parameters), plantingDay);
-  const date = (day: number | null) => (day === null ? null : isoDateOfDay(year, day));
+  const date = (day: number | null) => (day === null ? null : rememberedDate(year, day));
   return {
     planted: plantingDate,
     ve: date(stages.ve),
@@ -142,7 +155,7 @@ export function seasonLine({ climate, relativeMaturity, plantingDate, parameters
     r7: date(stages.r7),
     r8: date(stages.r8),
     freeze: {
-      medianDate: isoDateOfDay(year, Math.round(climate.firstKillingFreezeDayOfYear)),
+      medianDate: rememberedDate(year, Math.round(climate.firstKillingFreezeDayOfYear)),
       ...freezeRisk(climate, stages),
     },
   };

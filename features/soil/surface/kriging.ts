@@ -89,16 +89,35 @@ export function krigingLeaveOneOutErrors(kriging: Kriging): Float64Array {
   );
 }
 
+/** Estimate at one place, without its variance. */
+function estimateAt({ points, variogram, weights, mean }: Kriging, x: number, y: number): number {
+  let sum = mean;
+  for (let i = 0; i < points.x.length; i++) {
+    const dx = x - (points.x[i] as number);
+    const dy = y - (points.y[i] as number);
+    const squared = dx * dx + dy * dy;
+    if (squared < SAME_SPOT_SQUARE_METERS) return points.value[i] as number;
+    sum += (weights[i] as number) * covariance(variogram, Math.sqrt(squared));
+  }
+  return sum;
+}
+
+/** With fewer covariances than this to work out, each is worked out by itself: the table would cost more than it saves. */
+const WORTH_A_TABLE = 100_000;
 /** Steps of the covariance table; straight lines between them err by less than a millionth of the sill. */
 const TABLE_STEPS = 8192;
 /** An exponential covariance past this many ranges is nothing: e⁻¹⁸. */
 const EXPONENTIAL_REACH = 18;
 
 /**
- * Estimates at many places (no variance): `into[k]` for x[k], y[k]. Covariances come from a table by distance, which costs the
- * same for every model.
+ * Estimates at many places (no variance): `into[k]` for x[k], y[k]. On large grids covariances come from a table by distance,
+ * which costs the same for every model.
  */
 export function krigeMany(kriging: Kriging, x: Float64Array, y: Float64Array, into: Float64Array): void {
+  if (x.length * kriging.points.x.length < WORTH_A_TABLE) {
+    for (let k = 0; k < x.length; k++) into[k] = estimateAt(kriging, x[k] as number, y[k] as number);
+    return;
+  }
   const { points, variogram, weights, mean } = kriging;
   const size = points.x.length;
   const px = points.x;

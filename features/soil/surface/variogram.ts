@@ -130,7 +130,7 @@ function fitSills(
 }
 
 const RANGES_TRIED = 60;
-const REFINEMENTS = 60;
+const REFINEMENTS = 32;
 
 /**
  * Fits a variogram by least squares with weights pairs/distance² (gstat's default). For any range the sills are a linear
