@@ -3,44 +3,59 @@ import type { Evaluation } from './evaluate';
 import { FACTORS } from './factors/index';
 import { DRAWS, shocksOf } from './random';
 
+/** Factors whose shocks are worked out before the rest is bounded: the few that tell varieties apart decide nearly every draw. */
+const WORKED_FIRST = 4;
+/** Guards the bounds below against rounding, in logs. */
+const ROUNDING = 1e-9;
+
+/** The shared shocks that matter here, laid out draw by draw, and the length of each draw's vector of them. */
 interface SharedShocks {
-  /** Draw-major: the factors' shocks of one draw stand together. */
+  factors: number[];
   byDraw: Float64Array;
-  /** Length of each draw's vector of shocks. */
   norms: Float64Array;
 }
 
-let sharedShocks: SharedShocks | null = null;
+/** Layouts kept ready: fields of one operation are told apart by much the same factors. */
+const layouts = new Map<string, SharedShocks>();
+const MOST_LAYOUTS = 24;
 
-function makeSharedShocks(): SharedShocks {
-  const byDraw = new Float64Array(DRAWS * FACTORS.length);
+function layOut(factors: number[]): SharedShocks {
+  const key = factors.join();
+  const known = layouts.get(key);
+  if (known) return known;
+  const byDraw = new Float64Array(DRAWS * factors.length);
   const norms = new Float64Array(DRAWS);
-  FACTORS.forEach((factor, f) => {
-    const shocks = shocksOf(`factor ${factor.id}`);
-    for (let draw = 0; draw < DRAWS; draw++) {
-      byDraw[draw * FACTORS.length + f] = shocks[draw]!;
-      norms[draw] = norms[draw]! + shocks[draw]! ** 2;
+  for (let i = 0; i < factors.length; i++) {
+    const shocks = shocksOf(`factor ${FACTORS[factors[i]!]!.id}`);
+    for (let draw = 0, at = i; draw < DRAWS; draw++, at += factors.length) {
+      const shock = shocks[draw]!;
+      byDraw[at] = shock;
+      norms[draw] = norms[draw]! + shock * shock;
     }
-  });
+  }
   for (let draw = 0; draw < DRAWS; draw++) norms[draw] = Math.sqrt(norms[draw]!);
-  return { byDraw, norms };
+  if (layouts.size >= MOST_LAYOUTS) layouts.clear();
+  const laidOut = { factors, byDraw, norms };
+  layouts.set(key, laidOut);
+  return laidOut;
 }
 
-/** Differences worked out before the rest is bounded: the largest few decide nearly every draw. */
-const WORKED_FIRST = 4;
-
-function lengthOf(values: Float64Array, indexes: readonly number[]): number {
-  return Math.sqrt(indexes.reduce((sum, index) => sum + values[index]! ** 2, 0));
+/** Factors by how much they tell the evaluations apart, the most telling first; beyond the first four, those that never do are left out. */
+function tellingFactors(evaluations: readonly Evaluation[], leader: Evaluation): number[] {
+  const spread = new Float64Array(FACTORS.length);
+  for (const one of evaluations) {
+    for (let f = 0; f < spread.length; f++) spread[f] = spread[f]! + (one.slopes[f]! - leader.slopes[f]!) ** 2;
+  }
+  return FACTORS.map((_, f) => f)
+    .sort((a, b) => spread[b]! - spread[a]! || a - b)
+    .filter((f, i) => i < WORKED_FIRST || spread[f]! > 0);
 }
-
-/** Guards the bound below against rounding, in logs. */
-const ROUNDING = 1e-9;
 
 /**
  * Share of `DRAWS` seeded draws in which each evaluation comes first, in the order given (best expected first). A draw is one
  * way the season could go: each factor's shared shock moves all varieties, each by its own slope, and each variety has a shock
  * of its own. What moves all alike (the field's own deviation) cannot change a rank and is left out. Shocks belong to names, so
- * the result depends neither on the order nor on what else is ranked. Shares sum to 1 when there is anything to rank.
+ * the result does not depend on the order of the line-up. Shares sum to 1 when there is anything to rank.
  *
  * Most scores are never worked out in full: by Cauchy's inequality a variety's shared part cannot lift it by more than the length
  * of its slopes times the length of the draw, and where even that leaves it behind, it is behind.
@@ -48,54 +63,69 @@ const ROUNDING = 1e-9;
 export function holdOf(evaluations: readonly Evaluation[]): number[] {
   const leader = evaluations[0];
   if (!leader) return [];
-  sharedShocks ??= makeSharedShocks();
-  const { byDraw, norms } = sharedShocks;
-  const size = FACTORS.length;
+  const telling = tellingFactors(evaluations, leader);
+  const head = layOut(telling.slice(0, WORKED_FIRST).sort((a, b) => a - b));
+  const tail = layOut(telling.slice(WORKED_FIRST).sort((a, b) => a - b));
   const best = new Float64Array(DRAWS);
   const winner = new Int32Array(DRAWS);
   const leaderMean = Math.log(leader.assessment.expected);
   const leaderShocks = shocksOf(`variety ${leader.variety.id}`);
   for (let draw = 0; draw < DRAWS; draw++) best[draw] = leaderMean + leader.ownLogDeviation * leaderShocks[draw]!;
-
-  // Scores stand relative to the leader's response to the shared shocks, so only differences of slopes matter.
-  const differences = new Float64Array(size);
-  for (let i = 1; i < evaluations.length; i++) {
-    const one = evaluations[i]!;
-    for (let f = 0; f < size; f++) differences[f] = one.slopes[f]! - leader.slopes[f]!;
-    const largest = FACTORS.map((_, f) => f).sort((a, b) => Math.abs(differences[b]!) - Math.abs(differences[a]!));
-    const head = largest.slice(0, WORKED_FIRST);
-    const tail = largest.slice(WORKED_FIRST).filter((f) => differences[f] !== 0);
-    const headReach = lengthOf(differences, head);
-    const tailReach = lengthOf(differences, tail);
-    const mean = Math.log(one.assessment.expected);
-    const own = one.ownLogDeviation;
-    const shocks = shocksOf(`variety ${one.variety.id}`);
-    const [f0, f1, f2, f3] = head as [number, number, number, number];
-    const d0 = differences[f0]!;
-    const d1 = differences[f1]!;
-    const d2 = differences[f2]!;
-    const d3 = differences[f3]!;
-    for (let draw = 0; draw < DRAWS; draw++) {
-      let score = mean + own * shocks[draw]!;
-      const norm = norms[draw]!;
-      const needed = best[draw]! - ROUNDING - tailReach * norm;
-      if (score + headReach * norm < needed) continue;
-      const start = draw * size;
-      score += d0 * byDraw[start + f0]! + d1 * byDraw[start + f1]! + d2 * byDraw[start + f2]! + d3 * byDraw[start + f3]!;
-      if (score < needed) continue;
-      for (let t = 0; t < tail.length; t++) score += differences[tail[t]!]! * byDraw[start + tail[t]!]!;
-      if (score > best[draw]!) {
-        best[draw] = score;
-        winner[draw] = i;
-      }
-    }
-  }
+  for (let i = 1; i < evaluations.length; i++) drawOne(evaluations[i]!, i, leader, head, tail, best, winner);
   const wins = new Array<number>(evaluations.length).fill(0);
   for (let draw = 0; draw < DRAWS; draw++) {
     const index = winner[draw]!;
     wins[index] = wins[index]! + 1;
   }
   return wins.map((count) => count / DRAWS);
+}
+
+/** Scores stand relative to the leader's response to the shared shocks, so only differences of slopes matter. */
+function differencesOf(one: Evaluation, leader: Evaluation, shared: SharedShocks): { slopes: Float64Array; length: number } {
+  const slopes = new Float64Array(shared.factors.length);
+  let squares = 0;
+  for (let i = 0; i < slopes.length; i++) {
+    const difference = one.slopes[shared.factors[i]!]! - leader.slopes[shared.factors[i]!]!;
+    slopes[i] = difference;
+    squares += difference * difference;
+  }
+  return { slopes, length: Math.sqrt(squares) };
+}
+
+/** Run one evaluation through all draws against the best so far; where it is better, it is the winner. */
+function drawOne(
+  one: Evaluation,
+  index: number,
+  leader: Evaluation,
+  head: SharedShocks,
+  tail: SharedShocks,
+  best: Float64Array,
+  winner: Int32Array,
+): void {
+  const { slopes: headSlopes, length: headLength } = differencesOf(one, leader, head);
+  const { slopes: tailSlopes, length: tailLength } = differencesOf(one, leader, tail);
+  const headNorms = head.norms;
+  const tailNorms = tail.norms;
+  const headShocks = head.byDraw;
+  const tailShocks = tail.byDraw;
+  const [h0, h1, h2, h3] = headSlopes as unknown as [number, number, number, number];
+  const tailSize = tailSlopes.length;
+  const mean = Math.log(one.assessment.expected);
+  const own = one.ownLogDeviation;
+  const shocks = shocksOf(`variety ${one.variety.id}`);
+  for (let draw = 0; draw < DRAWS; draw++) {
+    let score = mean + own * shocks[draw]!;
+    const needed = best[draw]! - ROUNDING - tailLength * tailNorms[draw]!;
+    if (score + headLength * headNorms[draw]! < needed) continue;
+    const at4 = draw * WORKED_FIRST;
+    score += h0 * headShocks[at4]! + h1 * headShocks[at4 + 1]! + h2 * headShocks[at4 + 2]! + h3 * headShocks[at4 + 3]!;
+    if (score < needed) continue;
+    for (let i = 0, at = draw * tailSize; i < tailSize; i++) score += tailSlopes[i]! * tailShocks[at + i]!;
+    if (score > best[draw]!) {
+      best[draw] = score;
+      winner[draw] = index;
+    }
+  }
 }
 
 /** Hold in words: 0.9 → `holds first in 9 of 10`. */

@@ -34,3 +34,8 @@ const DAY_MILLISECONDS = 86_400_000;
 export function shiftedDate(date: IsoDate, days: number): IsoDate {
   return new Date(Date.parse(`${date}T00:00:00Z`) + Math.round(days) * DAY_MILLISECONDS).toISOString().slice(0, 10);
 }
+
+/** Whole days from one ISO date to another; negative when the second comes first. */
+export function daysBetween(from: IsoDate, to: IsoDate): number {
+  return Math.round((Date.parse(`${to}T00:00:00Z`) - Date.parse(`${from}T00:00:00Z`)) / DAY_MILLISECONDS);
+}

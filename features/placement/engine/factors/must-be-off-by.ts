@@ -1,7 +1,7 @@
 import { normalCdf, STAGE_STANDARD_DEVIATION_DAYS } from '@/features/placement/climate/freeze';
-import { dayOfYear, formatDay } from '@/lib/dates';
+import { formatDay } from '@/lib/dates';
 import { answer, type Factor } from '../factor';
-import { shiftedDate } from '../what-if';
+import { daysBetween, shiftedDate } from '../what-if';
 import { yearsIn } from '../words';
 
 /**
@@ -19,8 +19,7 @@ export const mustBeOffBy: Factor = {
     if (field.mustBeOffBy === null) return answer({ reason: 'no date to be clear by', source });
     const { r8 } = site.line(variety.relativeMaturity);
     const charge = Math.max(0, field.mustBeOffChargeBushelsPerAcre ?? c.mustBeOffCharge);
-    const ready = r8 ? dayOfYear(r8) + c.mustBeOffHarvestDays : null;
-    const spare = ready === null ? null : dayOfYear(field.mustBeOffBy) - ready;
+    const spare = r8 ? daysBetween(r8, field.mustBeOffBy) - c.mustBeOffHarvestDays : null;
     const chance = spare === null ? 1 : normalCdf(-spare / STAGE_STANDARD_DEVIATION_DAYS);
     const loss = Math.min(0.9, (chance * charge) / site.potential.bushelsPerAcre);
     return answer({

@@ -1,7 +1,8 @@
 import { formatDay } from '@/lib/dates';
 import { answer, type Factor } from '../factor';
-import type { AskedQuestion } from '../model';
+import type { AskedQuestion, Kept } from '../model';
 import { along, type Curve, rootSumSquares } from '../numbers';
+import type { Site } from '../site';
 import { ask } from '../words';
 
 /**
@@ -18,30 +19,33 @@ export const RELATIVE_YIELD_BY_PLANTING_DAY: Curve = [
   [205, 0.2],
 ];
 
+/** The same for every variety, so worked out once a field. */
+function lossOf(site: Site): Kept {
+  const { c, plantingDay } = site;
+  const now = along(RELATIVE_YIELD_BY_PLANTING_DAY, plantingDay);
+  const late = along(RELATIVE_YIELD_BY_PLANTING_DAY, plantingDay + c.plantingDateUnknownDays);
+  const unknown = site.plantingKnown ? 0 : Math.abs(now - late) * 0.6;
+  const field = site.plantingKnown ? now : 0.75 * now + 0.25 * late;
+  const asks: AskedQuestion[] = site.plantingKnown
+    ? []
+    : [ask('plantingDate', 'On what day will this field be planted?', unknown / field)];
+  return answer({
+    field,
+    fieldDeviation: rootSumSquares(c.plantingDateUncertainty * (1 - field), unknown) / field,
+    reason: site.plantingKnown
+      ? `planted ${formatDay(site.plantingDate)}`
+      : `planting day not given, ${formatDay(site.plantingDate)} assumed`,
+    detail: 'the same for every variety',
+    source: 'Penn State Agronomy Guide; after 20 June Iowa State ICM 2008',
+    asks,
+  });
+}
+
 /** Planting date: the same for every variety, wholly field. Cold seedbeds of early dates stand under emergence. */
 export const plantingDate: Factor = {
   id: 'planting-date',
   label: 'Planting date',
   color: 'factor-planting-date',
   needs: ['plantingDate'],
-  kept({ site }) {
-    const { c, plantingDay } = site;
-    const now = along(RELATIVE_YIELD_BY_PLANTING_DAY, plantingDay);
-    const late = along(RELATIVE_YIELD_BY_PLANTING_DAY, plantingDay + c.plantingDateUnknownDays);
-    const unknown = site.plantingKnown ? 0 : Math.abs(now - late) * 0.6;
-    const field = site.plantingKnown ? now : 0.75 * now + 0.25 * late;
-    const asks: AskedQuestion[] = site.plantingKnown
-      ? []
-      : [ask('plantingDate', 'On what day will this field be planted?', unknown / field)];
-    return answer({
-      field,
-      fieldDeviation: rootSumSquares(c.plantingDateUncertainty * (1 - field), unknown) / field,
-      reason: site.plantingKnown
-        ? `planted ${formatDay(site.plantingDate)}`
-        : `planting day not given, ${formatDay(site.plantingDate)} assumed`,
-      detail: 'the same for every variety',
-      source: 'Penn State Agronomy Guide; after 20 June Iowa State ICM 2008',
-      asks,
-    });
-  },
+  kept: ({ site }) => site.once('kept: planting date', lossOf),
 };

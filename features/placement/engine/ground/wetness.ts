@@ -88,9 +88,16 @@ function drainageWords(shares: Shares, tiled: boolean | null): string {
   return `${wet.map((one) => `${percent(one.share)} ${one.class} drained`).join(', ')}${tile}`;
 }
 
+/** Shares of what is known, brought to a sum of 1; `null` when nothing is. */
+function wholeOf(shares: FieldProfile['drainageShares']): Shares | null {
+  const total = (shares ?? []).reduce((sum, one) => sum + one.share, 0);
+  if (!shares || total <= 0) return null;
+  return Math.abs(total - 1) < 1e-9 ? shares : shares.map((one) => ({ ...one, share: one.share / total }));
+}
+
 function describe(site: Site): Wetness {
   const { field, c } = site;
-  const known = field.drainageShares && field.drainageShares.length > 0 ? field.drainageShares : null;
+  const known = wholeOf(field.drainageShares);
   const shareLists = known
     ? [{ weight: 1, shares: known }]
     : UNDESCRIBED.map((one) => ({
