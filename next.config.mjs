@@ -7,7 +7,7 @@ const contentSecurityPolicy = [
   "style-src 'self' 'unsafe-inline'",
   `img-src 'self' data: blob: ${tiles}`,
   "font-src 'self'",
-  `connect-src 'self' ${tiles}${development ? ' ws:' : ''}`,
+  `connect-src 'self' data: blob: ${tiles}${development ? ' ws:' : ''}`,
   "worker-src 'self' blob:",
   "object-src 'none'",
   "base-uri 'self'",

@@ -82,3 +82,24 @@ export function fieldLine(input: {
     scored: score !== null,
   };
 }
+
+/** Layers of the field's map, in the order of its buttons; the key is in the address. */
+export const FIELD_LAYERS = [
+  { key: 'picks', label: 'Picks' },
+  { key: 'ph', label: 'Soil pH' },
+  { key: 'drainage', label: 'Drainage' },
+  { key: 'survey', label: 'Soil survey' },
+] as const;
+export type FieldLayer = (typeof FIELD_LAYERS)[number]['key'];
+
+/** The layer an address asks for; picks when it asks for none that exists. */
+export function layerOf(asked: string | undefined): FieldLayer {
+  return FIELD_LAYERS.find((layer) => layer.key === asked)?.key ?? 'picks';
+}
+
+/** Varieties an address asks to compare: two to four that exist, else the first three picks. */
+export function comparedIds(asked: string | undefined, ranking: Ranking): string[] {
+  const known = new Set([...ranking.picks.map((pick) => pick.varietyId), ...ranking.stopped.map((one) => one.varietyId)]);
+  const wanted = [...new Set((asked ?? '').split(',').filter((id) => known.has(id)))].slice(0, 4);
+  return wanted.length >= 2 ? wanted : ranking.picks.slice(0, 3).map((pick) => pick.varietyId);
+}

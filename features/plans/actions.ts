@@ -121,3 +121,16 @@ export async function revokeSheetLink(_before: PlanFormState, form: FormData): P
   await requireViewer();
   return step(form, links.revokeLink, 'Revoked. The link opens nothing any more.');
 }
+
+/** Puts a pick of the field page on the plan; says what was put, or why not. */
+export async function putPickOnPlan(
+  key: Key & { revision: number },
+  fieldId: string,
+  varietyId: string,
+): Promise<Outcome<{ words: string }>> {
+  const viewer = await requireViewer();
+  const outcome = await rows.putOnPlan(viewer, { ...key, fieldId, varietyId });
+  revalidatePath(`/plans/${key.operationId}/${key.season}`);
+  revalidatePath(`/fields/${fieldId}`);
+  return outcome.ok ? { ok: true, value: { words: 'It is on the plan. Set its lot and seeds per acre there.' } } : outcome;
+}

@@ -1,4 +1,4 @@
-import { formatAcres, formatBushels } from '@/lib/format';
+import { formatBushels } from '@/lib/format';
 import { CAUTIONS } from '@/lib/ui/cautions';
 import type { FixFirst, QuestionWorth, Stopped } from '../engine/model';
 
@@ -13,9 +13,8 @@ export function FixFirstBox({ fixes }: { fixes: FixFirst[] }) {
       <ul className="mt-1 flex flex-col gap-2">
         {fixes.map((fix) => (
           <li key={`${fix.factor} ${fix.title}`}>
-            <b>{fix.title}:</b> {fix.remedy} Worth about <b>{formatBushels(fix.worthBushelsPerAcre)} bu/ac</b> on{' '}
-            {formatAcres(fix.acres)} ac
-            {fix.costDollarsPerAcre === null ? '' : `; costs about $${fix.costDollarsPerAcre.toFixed(0)}/ac`}.{' '}
+            {fix.remedy}
+            {fix.costDollarsPerAcre === null ? '' : ` Costs about $${fix.costDollarsPerAcre.toFixed(0)}/ac.`}{' '}
             <span className="block text-[0.88em] text-straw-deep">
               {fix.caution} Source: {fix.source}
             </span>
