@@ -13,6 +13,8 @@ import { readFacts } from './facts-file';
 import { type FieldSamples, NO_SAMPLES, samplesByField } from './soil-files';
 
 const RULES: PlacementRules = { overrides: {}, zone: null, releasesPlaced: ['full', 'limited'] };
+/** Farther from every station than this, a climate is a guess. */
+const FARTHEST_STATION_MILES = 300;
 /** From September on, the next crop is planned. */
 const NEXT_CROP_FROM_MONTH = 8;
 
@@ -186,6 +188,10 @@ stopped:[{code,reason}],fixFirst:[…]}]}. Potential and ledger lines sum to exp
         mapUnits: [],
       });
       const climate = climateForPlace({ latitude, longitude, elevationFt: null });
+      const miles = climate.stations[0]?.distanceMiles ?? Infinity;
+      if (miles > FARTHEST_STATION_MILES) {
+        notes.push(`${field.name}: the nearest climate station is ${Math.round(miles)} miles away; its season is a guess.`);
+      }
       const ranking = rank(profile, lineUp.varieties, { year: season, climate, parameters: 'current' }, RULES);
       return outputOf(field, ranking, top, lineUp.withoutMaturity);
     });

@@ -82,12 +82,23 @@ function matched(header: readonly string[]): Map<Column['key'], { name: string; 
   return found;
 }
 
+const TITLE_LINES = 20;
+
+/** Blanks the title lines that laboratories put above the header, so that row numbers stay those of the file. */
+function withoutTitle(text: string): string {
+  const lines = text.split(/\r?\n/);
+  const header = lines
+    .slice(0, TITLE_LINES)
+    .findIndex((line) => matched(line.split(',').map((cell) => cell.replaceAll('"', ''))).has('ph'));
+  return lines.map((line, i) => (i < header ? '' : line)).join('\n');
+}
+
 /**
  * Reads soil tests and gives each to the field that holds it (30 ft of tolerance), or, without coordinates, to the field it
  * names. Refuses files without pH or a way to place rows, and values that cannot be; notes points in no field.
  */
 export async function samplesByField(path: string, fields: readonly BoundaryField[]): Promise<FieldSamples> {
-  const { header, rows } = readCsv(await readText(path), path);
+  const { header, rows } = readCsv(withoutTitle(await readText(path)), path);
   const columns = matched(header);
   const placed = columns.has('latitude') && columns.has('longitude');
   if (!columns.has('ph')) refuse(`${path} has no pH column. Its columns: ${header.join(', ') || 'none'}.`);

@@ -165,6 +165,19 @@ describe('hilum place', () => {
     expect(withSoil.fields[0]!.fixFirst.length).toBeGreaterThan(0);
   });
 
+  test('title lines above a laboratory’s header are passed over', async () => {
+    const titled = file('titled.csv', `Valley Soil Laboratory\n"Report 12, spring"\n\n${soilCsv()}`);
+    const result = await runHilum([...place, '--facts', facts, '--soil', titled]);
+    expect(result.exitCode, result.stderr).toBe(0);
+    expect(result.stderr).toContain('1 of 26 samples lie in no field (row 30)');
+  });
+
+  test('a field far from any climate station is said to be', async () => {
+    const far = file('far.geojson', collection(aField('Far', -120.5, 51)));
+    const result = await runHilum(['place', '--boundaries', far, '--line-up', lineUp]);
+    expect(result.stderr).toContain('nearest climate station');
+  });
+
   test('the same input gives the same bytes, and the order of the line-up does not matter', async () => {
     const first = (await runHilum([...place, '--facts', facts])).stdout;
     expect((await runHilum([...place, '--facts', facts])).stdout).toBe(first);
