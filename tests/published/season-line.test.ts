@@ -107,6 +107,36 @@ describe('the season line against reference runs of the published coefficients',
   });
 });
 
+describe('the season line against what extension services saw', () => {
+  /** Conley & Shaner, Purdue University, West Lafayette: RM 3.6 planted April 29 and June 2. */
+  const climate = climateForPlace({ latitude: 40.42, longitude: -86.9, elevationFt: 620 });
+  const stages = (planted: string) => stageDays(climate, coefficientsOf(3.6, 'current'), dayOfYear(planted));
+
+  test('at West Lafayette planting June 2 in place of April 29 puts R6 13 days later (August 13 and 26), to 3 days', () => {
+    expect(Math.abs(stages('2027-06-02').r6! - stages('2027-04-29').r6! - 13)).toBeLessThanOrEqual(3);
+  });
+
+  test('and R6 itself falls within ten days of what was seen there', () => {
+    expect(Math.abs(stages('2027-04-29').r6! - dayOfYear('2027-08-13'))).toBeLessThanOrEqual(10);
+    expect(Math.abs(stages('2027-06-02').r6! - dayOfYear('2027-08-26'))).toBeLessThanOrEqual(10);
+  });
+
+  test('a month between plantings is about two weeks at R7', () => {
+    const weeks = (stages('2027-06-02').r7! - stages('2027-05-02').r7!) / 7;
+    expect(weeks).toBeGreaterThan(1.3);
+    expect(weeks).toBeLessThan(2.7);
+  });
+
+  test.each([2.2, 2.8, 3.4])(
+    'at Champaign one group later than RM %s is about 10 days at R7 (University of Illinois), to 5 days',
+    (maturity) => {
+      const champaign = reference('Champaign Willard Ap, IL');
+      const r7 = (one: number) => stageDays(champaign, coefficientsOf(one, 'current'), 130).r7 as number;
+      expect(Math.abs(r7(maturity + 0.5) - r7(maturity - 0.5) - 10)).toBeLessThanOrEqual(5);
+    },
+  );
+});
+
 describe('daily rates against the published rows (SBGRO048.CUL, .ECO, .SPE; PHENOL.for)', () => {
   test.each([
     [0, 19.948],
