@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { assess } from '@/features/placement/engine/assess';
+import { FACTORS } from '@/features/placement/engine/factors/index';
 import {
   BUSH_TYPES,
   CYST_SOURCES,
@@ -11,7 +12,10 @@ import {
   TILLAGES,
   type VarietyProfile,
 } from '@/features/placement/engine/model';
-import { rank } from '@/features/placement/engine/rank';
+import { logDeviationOf } from '@/features/placement/engine/numbers';
+import { DRAWS, shocksOf } from '@/features/placement/engine/random';
+import { ordered, rank } from '@/features/placement/engine/rank';
+import { siteOf } from '@/features/placement/engine/site';
 import { withLime, withTile } from '@/features/placement/engine/what-if';
 import { aField, aSeason, aVariety, someRules } from '@/tests/support/profiles';
 
@@ -43,7 +47,7 @@ const anyField: fc.Arbitrary<FieldProfile> = fc
     yieldHistoryBushelsPerAcre: fc.array(number(20, 90), { maxLength: 6 }),
     rowWidthInches: maybe(number(6, 40)),
     plantingDate: maybe(plantings),
-    populationSeedsPerAcre: maybe(number(40000, 240000)),
+    populationSeedsPerAcre: maybe(number(0, 240000)),
     seedTreated: maybe(fc.boolean()),
     tillage: maybe(fc.constantFrom(...TILLAGES)),
     irrigated: maybe(fc.boolean()),
@@ -94,7 +98,7 @@ const anyVariety: fc.Arbitrary<VarietyProfile> = fc
     bushType: maybe(fc.constantFrom(...BUSH_TYPES)),
     phytophthoraGenes: fc.subarray(['1a', '1c', '1k', '3a', '8']),
     cystNematodeSource: maybe(fc.constantFrom(...CYST_SOURCES)),
-    germinationPercent: maybe(number(70, 99)),
+    germinationPercent: maybe(number(0, 100)),
     trialAdvantage: number(-0.1, 0.1),
     trialAdvantageStandardError: number(0, 0.05),
     ...(Object.fromEntries(RATINGS.map((name) => [name, rating])) as Record<(typeof RATINGS)[number], typeof rating>),
@@ -128,6 +132,47 @@ describe('whatever the field and the variety', () => {
           expect(line.matchBushels).toBeLessThanOrEqual(TINY);
         }
       }),
+    );
+  });
+
+  test('each factor keeps field × match, with its 10th percentile under and its 90th over the middle', () => {
+    fc.assert(
+      fc.property(anyField, anyVariety, (field, variety) => {
+        const site = siteOf(field, season, rules);
+        for (const factor of FACTORS) {
+          const one = factor.kept({ site, variety });
+          expect(one.kept.mid).toBeCloseTo(one.field.mid * one.match.mid, 12);
+          for (const { low, mid, high } of [one.kept, one.field, one.match]) {
+            expect(low > 0 && low <= mid && mid <= high && high <= 1 + TINY, factor.id).toBe(true);
+          }
+          const ofMatch = Math.hypot(one.sharedLogSlope, one.ownLogDeviation);
+          expect(logDeviationOf(one.match)).toBeCloseTo(ofMatch, 9);
+          for (const question of one.asks) expect(question.logDeviation).toBeGreaterThanOrEqual(0);
+        }
+      }),
+    );
+  });
+
+  test('hold is what working out every draw in full gives', () => {
+    fc.assert(
+      fc.property(anyField, anyLineUp, (field, lineUp) => {
+        const { picks } = ordered(siteOf(field, season, rules), lineUp);
+        const shared = FACTORS.map((factor) => shocksOf(`factor ${factor.id}`));
+        const wins = picks.map(() => 0);
+        for (let draw = 0; draw < DRAWS; draw++) {
+          const scores = picks.map((one) => {
+            const own = one.ownLogDeviation * shocksOf(`variety ${one.variety.id}`)[draw]!;
+            const moved = shared.reduce((sum, shocks, f) => sum + one.slopes[f]! * shocks[draw]!, 0);
+            return Math.log(one.assessment.expected) + own + moved;
+          });
+          const winner = scores.indexOf(Math.max(...scores));
+          wins[winner] = wins[winner]! + 1;
+        }
+        const hold = rank(field, lineUp, season, rules).picks.map((one) => one.hold * DRAWS);
+        // A draw in which two come out even to the last digit may fall either way.
+        hold.forEach((count, i) => void expect(Math.abs(count - wins[i]!)).toBeLessThanOrEqual(1));
+      }),
+      { numRuns: 25 },
     );
   });
 

@@ -2,7 +2,7 @@
 import { FACTORS } from './factors/index';
 import { ledgerOf } from './ledger';
 import type { AskedQuestion, Assessment, Kept, Stopped, VarietyProfile } from './model';
-import { logDeviationOf, NINETIETH } from './numbers';
+import { clamp, logDeviationOf, NINETIETH } from './numbers';
 import type { Site } from './site';
 import { weedAdvice } from './weeds/advice';
 
@@ -16,6 +16,9 @@ export interface Evaluation {
   ownLogDeviation: number;
   asks: AskedQuestion[];
 }
+
+/** No shrunken trial advantage is larger than this; one that says so is a slip of units. */
+const MOST_FROM_TRIALS = 0.5;
 
 function stopOf(site: Site, variety: VarietyProfile, kept: readonly Kept[]): Stopped | null {
   const { id: varietyId, code } = variety;
@@ -48,7 +51,8 @@ export function evaluate(site: Site, variety: VarietyProfile): Evaluation {
     slopes[i] = one.sharedLogSlope;
     for (const question of one.asks) asks.push(question);
   }
-  const trials = 1 + variety.trialAdvantage;
+  const advantage = clamp(variety.trialAdvantage, -MOST_FROM_TRIALS, MOST_FROM_TRIALS);
+  const trials = 1 + advantage;
   const beyondTraits =
     variety.trialAdvantageStandardError > 0 ? variety.trialAdvantageStandardError / trials : c.untestedVarietyDeviation;
   varietyVariance += beyondTraits ** 2;
@@ -56,7 +60,8 @@ export function evaluate(site: Site, variety: VarietyProfile): Evaluation {
 
   const { bushelsPerAcre } = potential;
   const ledger = ledgerOf(bushelsPerAcre, kept, c.gatheredBelowBushels);
-  const trialBushels = ledger.withoutTrials * variety.trialAdvantage;
+  // + 0: minus zero would not survive being stored.
+  const trialBushels = ledger.withoutTrials * advantage + 0;
   const expected = ledger.withoutTrials + trialBushels;
   const reach = Math.exp(NINETIETH * Math.sqrt(fieldVariance + varietyVariance));
   const line = site.line(variety.relativeMaturity);

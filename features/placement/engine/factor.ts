@@ -40,7 +40,7 @@ export interface Finding {
 
 const NOTHING_ASKED: AskedQuestion[] = [];
 /** No factor takes more than this of the yield: the lowest fraction kept. */
-const LOWEST_KEPT = 0.05;
+export const LOWEST_KEPT = 0.05;
 
 /** Build the `Kept` of a finding: field × match = kept, each with its 10th to 90th percentile. */
 export function answer(finding: Finding): Kept {

@@ -1,5 +1,5 @@
 import { formatDay } from '@/lib/dates';
-import { answer, type Factor } from '../factor';
+import { answer, type Factor, LOWEST_KEPT } from '../factor';
 import type { AskedQuestion } from '../model';
 import { along, type Curve, clamp } from '../numbers';
 import { susceptibility, susceptibilityDeviation } from '../rated';
@@ -91,9 +91,12 @@ export const emergence: Factor = {
     const standWith = (share: number) =>
       site.populationSeedsPerAcre * germination * (c.fieldEmergenceBest - c.fieldEmergenceSpan * share * Math.min(1, bed.stress));
     const keptWith = (share: number) =>
-      along(RELATIVE_YIELD_BY_STAND, standWith(share) * bed.standRatio) * (1 - c.emergenceLoss * bed.stress * share);
+      Math.max(
+        LOWEST_KEPT,
+        along(RELATIVE_YIELD_BY_STAND, standWith(share) * bed.standRatio) * (1 - c.emergenceLoss * bed.stress * share),
+      );
     const share = susceptibility(variety.emergence);
-    const field = Math.max(0.05, keptWith(0));
+    const field = keptWith(0);
     const match = keptWith(share) / field;
     const step = susceptibilityDeviation(variety.emergence, c);
     const ownDeviation =
