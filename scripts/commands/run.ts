@@ -11,6 +11,10 @@ const COMMANDS: Record<string, { summary: string; load(): Promise<Command> }> = 
     summary: 'stages of a variety at a place, and what a freeze would cost',
     load: async () => (await import('./season-line')).seasonLineCommand,
   },
+  solve: {
+    summary: 'the best variety for every field within supply and wishes',
+    load: async () => (await import('./solve')).solveCommand,
+  },
   surface: {
     summary: 'a surface from points by kriging or inverse distance',
     load: async () => (await import('./surface')).surfaceCommand,
