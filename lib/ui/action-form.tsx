@@ -1,6 +1,6 @@
 'use client';
 
-import { type ReactNode, useActionState } from 'react';
+import { type FormEvent, Fragment, type ReactNode, startTransition, useActionState, useState } from 'react';
 import type { Outcome } from '@/lib/errors';
 import { Button, type ButtonKind } from './button';
 import { Notice } from './page';
@@ -16,7 +16,8 @@ export function problemFor(state: ActionState, path: string): string | null {
 
 /**
  * A form bound to a server action. Problems without a field stand above it; those with one are handed to `children`.
- * Works without JavaScript too: the action runs on the server either way.
+ * Works without JavaScript too: the action runs on the server either way. What was typed stays while it is refused, and
+ * the inputs start anew once it is kept.
  */
 export function ActionForm({
   action,
@@ -34,9 +35,17 @@ export function ActionForm({
   className?: string;
 }) {
   const [state, run, pending] = useActionState(action, null);
+  const [kept, setKept] = useState({ state, times: 0 });
+  if (kept.state !== state) setKept({ state, times: kept.times + (state?.ok ? 1 : 0) });
+  // React empties a form after its action even when the action refused; sent by hand, it keeps what was typed.
+  const send = (event: FormEvent<HTMLFormElement>) => {
+    event.preventDefault();
+    const form = new FormData(event.currentTarget, (event.nativeEvent as SubmitEvent).submitter);
+    startTransition(() => run(form));
+  };
   const loose = state && !state.ok ? state.problems.filter((problem) => !problem.path) : [];
   return (
-    <form action={run} className={className} noValidate>
+    <form action={run} onSubmit={send} className={className} noValidate>
       {loose.length > 0 ? (
         <Notice kind="error">
           {loose.map((problem) => (
@@ -48,7 +57,7 @@ export function ActionForm({
       {Object.entries(hidden).map(([name, value]) => (
         <input key={name} type="hidden" name={name} value={value} />
       ))}
-      {children?.(state)}
+      <Fragment key={kept.times}>{children?.(state)}</Fragment>
       <div>
         <Button type="submit" kind={kind} pending={pending}>
           {submit}
