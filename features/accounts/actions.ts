@@ -3,6 +3,7 @@
 import { revalidatePath } from 'next/cache';
 import { cookies, headers } from 'next/headers';
 import { redirect } from 'next/navigation';
+import { environment } from '@/lib/env';
 import type { Outcome } from '@/lib/errors';
 import * as dealership from './changes/dealership';
 import * as invitations from './changes/invitations';
@@ -77,7 +78,12 @@ export async function invitePerson(_before: FormState, form: FormData): Promise<
   const outcome = await invitations.invitePerson(await requireViewer(), Object.fromEntries(form));
   revalidatePath('/settings/people');
   revalidatePath('/growers', 'layout');
-  return words(outcome, 'The invitation is on its way. Its link is good for 14 days.');
+  return words(
+    outcome,
+    environment().SMTP_URL
+      ? 'The invitation is on its way. Its link is good for 14 days.'
+      : 'No mail server is set, so the invitation is kept in the outbox, where a manager finds its link. It is good for 14 days.',
+  );
 }
 
 export async function withdrawInvitation(_before: FormState, form: FormData): Promise<FormState> {

@@ -7,7 +7,7 @@ export function Door({ title, lead, children }: { title: string; lead?: ReactNod
       <div className="border border-ink/60 bg-paper px-5 pt-6 pb-7 sm:px-7">
         <div className="mb-5 border-ink border-b-2 pb-3">
           <h1 className="text-[1.9rem]">{title}</h1>
-          {lead ? <div className="mt-1 text-mute">{lead}</div> : null}
+          {lead ? <div className="mt-1 break-words text-mute">{lead}</div> : null}
         </div>
         {children}
       </div>

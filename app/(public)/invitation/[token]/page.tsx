@@ -25,7 +25,8 @@ export default async function InvitationPage({ params }: { params: Promise<{ tok
       title="Open your account"
       lead={
         <>
-          {invitation.dealershipName} invites you as a {invitation.role}. You will sign in with <b>{invitation.email}</b>.
+          {invitation.dealershipName} invites you as a {invitation.role}. You will sign in with{' '}
+          <b className="break-words">{invitation.email}</b>.
         </>
       }
     >

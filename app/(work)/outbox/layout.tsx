@@ -1,0 +1,2 @@
+/** The outbox stands among the settings. */
+export { default } from '../settings/layout';
