@@ -86,11 +86,11 @@ function drain(site: Site, variety: VarietyProfile): FixFirst | null {
   const without = expectedOn(site, { ...field, tiled: false }, variety);
   const worth = (expectedOn(site, withTile(field), variety) - without) / wetShare;
   if (worth < WORTH_NAMING) return null;
-  const unsure = field.tiled === null ? 'If it has none, tile' : 'Tile';
+  const unsure = field.tiled === null ? 'If it has no tile, drain' : 'Drain';
   return {
     factor: 'wet-feet',
     title: `Drain ${acres.toFixed(1)} ac`,
-    remedy: `${unsure} the ${acres.toFixed(1)} ac somewhat poorly drained or worse (${percent(wetShare)} of the field), worth about ${worth.toFixed(1)} bu/ac there.`,
+    remedy: `${unsure} the ${acres.toFixed(1)} ac somewhat poorly drained or worse (${percent(wetShare)} of the field) by tile, or by grading and ditches, worth about ${worth.toFixed(1)} bu/ac there.`,
     worthBushelsPerAcre: worth,
     acres,
     costDollarsPerAcre: null,

@@ -20,7 +20,7 @@ export function relativeMaturityWords(value: number): string {
 
 /** 0.034 → `1 year in 29`; next to nothing and nearly always get words. */
 export function yearsIn(chance: number): string {
-  if (chance < 0.005) return 'hardly ever';
+  if (chance < 0.01) return 'hardly ever';
   if (chance > 0.95) return 'nearly every year';
   if (chance > 0.5) return `${Math.round(chance * 10)} years in 10`;
   return `1 year in ${Math.round(1 / chance)}`;

@@ -6,6 +6,8 @@ import { susceptibility, susceptibilityDeviation } from '../rated';
 import type { Site } from '../site';
 import { ask, percent, ratingWords } from '../words';
 
+/** Plants that yield all a May stand can. */
+const FULL_STAND = 100000;
 /**
  * Relative yield by plants that stand, planted in May: 46,000 83 %, 70,000 90–95 % (middle taken), 100,000 about all
  * (Penn State Agronomy Guide). Below 46,000 drawn on to nothing (planning).
@@ -15,7 +17,7 @@ export const RELATIVE_YIELD_BY_STAND: Curve = [
   [20000, 0.5],
   [46000, 0.83],
   [70000, 0.925],
-  [100000, 1],
+  [FULL_STAND, 1],
 ];
 /** A stand planted late needs more plants: 130,000–150,000 in June for 100,000–120,000 in May (Ohio State University 2019). */
 const JUNE_STAND_RATIO = 110 / 140;
@@ -104,13 +106,18 @@ export const emergence: Factor = {
     const asks = bed.asks.map((one) => ({ ...one, logDeviation: (one.logDeviation * share) / match }));
     if (variety.emergence === null) asks.push(ask('emergence', "What is this variety's emergence rating?", ownDeviation * 0.9));
     const stand = standWith(share);
+    const wanted = FULL_STAND / bed.standRatio;
+    const reason =
+      stand < wanted
+        ? `${Math.round(stand / 1000)},000 plants/ac, ${Math.round(wanted / 1000)},000 wanted${bed.standRatio < 1 ? ' when planted late' : ''}`
+        : bed.words;
     return answer({
       field,
       fieldDeviation: (c.emergenceUncertainty * (1 - field)) / field,
       match,
       sharedSlope: (-c.emergenceUncertainty * (1 - match)) / match,
       ownDeviation,
-      reason: `${bed.words}: ${ratingWords('emergence', variety.emergence)}`,
+      reason: `${reason}: ${ratingWords('emergence', variety.emergence)}`,
       detail: `${Math.round(stand / 1000)},000 plants/ac from ${Math.round(site.populationSeedsPerAcre / 1000)},000 seeds, ${percent(germination)} germination`,
       source:
         'Penn State Agronomy Guide (stand); Ohio State University 2019 (June stands); seedbed stress is a planning coefficient',

@@ -23,9 +23,10 @@ export const height: Factor = {
       { weight: 1, value: share.tall },
     ]);
     const own = variety.height ? share[variety.height] : unknown.mean;
-    const loss = c.shortOnDroughtyLoss * dry.index * own;
+    const most = c.shortOnDroughtyLoss * dry.lowYield;
+    const loss = most * dry.index * own;
     const match = 1 - loss;
-    const ownDeviation = variety.height ? 0 : (c.shortOnDroughtyLoss * dry.index * unknown.deviation) / match;
+    const ownDeviation = variety.height ? 0 : (most * dry.index * unknown.deviation) / match;
     const asks: AskedQuestion[] = [];
     if (!variety.height && ownDeviation > 0.0005) {
       asks.push(ask('height', 'Is this variety short, medium or tall?', ownDeviation));
@@ -35,7 +36,7 @@ export const height: Factor = {
     const ground = field.irrigated ? 'irrigated' : dry.index > 0.5 ? 'droughty' : dry.index > 0.15 ? 'thin' : 'good';
     return answer({
       match,
-      sharedSlope: -rootSumSquares(c.shortOnDroughtyLoss * own * dry.indexDeviation, 0.4 * loss) / match,
+      sharedSlope: -rootSumSquares(most * own * dry.indexDeviation, 0.4 * loss) / match,
       ownDeviation,
       reason: `${bushels} bu, ${ground} ground${storage}: ${variety.height ? `${variety.height} plant` : 'height unknown'}`,
       detail: loss < 0.001 ? 'short plants belong here; tall ones pay through standability' : '',

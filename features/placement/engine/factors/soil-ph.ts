@@ -16,7 +16,7 @@ function reasonOf(acidity: Acidity): string {
   const above73 = acidity.shareAbove(7.3);
   if (below6 >= 0.005) parts.push(`${percent(below6)} of the field below pH 6.0`);
   else if (below63 >= 0.005) parts.push(`${percent(below63)} of the field below pH 6.3`);
-  if (above73 >= 0.005) parts.push(`${percent(above73)} above pH 7.3`);
+  if (above73 >= 0.005) parts.push(`${percent(above73)}${parts.length === 0 ? ' of the field' : ''} above pH 7.3`);
   if (parts.length > 0) return parts.join(', ');
   const mean = acidity.shares.reduce((sum, one) => sum + one.value * one.share, 0);
   return `pH ${mean.toFixed(1)} on average`;

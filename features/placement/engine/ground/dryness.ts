@@ -32,17 +32,20 @@ export interface Dryness {
   /** Spread of that loss from unknown storage and irrigation alone. */
   unknownDeviation: number;
   deviation: number;
-  /** 0 (never dry) to 1 (droughty, low-yield): from storage and what the field can carry; 0 when irrigated. */
+  /** 0 (holds water, or irrigated) to 1 (droughty): from storage alone. */
   index: number;
   indexDeviation: number;
+  /** How much of a droughty field's penalty for short plants falls here: all of it on low-yield ground, less on better. */
+  lowYield: number;
   storageKnown: boolean;
 }
 
+/** Part of the penalty for short plants that droughty ground of good yield still carries (planning). */
+const LEAST_LOW_YIELD = 0.4;
+
 function indexAt(site: Site, storageInches: number): number {
   if (site.field.irrigated) return 0;
-  const byStorage = clamp((NOT_DROUGHTY_INCHES - storageInches) / (NOT_DROUGHTY_INCHES - DROUGHTY_INCHES), 0, 1);
-  const byYield = clamp((NOT_LOW_YIELD - site.potential.bushelsPerAcre) / (NOT_LOW_YIELD - LOW_YIELD), 0, 1);
-  return (byStorage + byYield) / 2;
+  return clamp((NOT_DROUGHTY_INCHES - storageInches) / (NOT_DROUGHTY_INCHES - DROUGHTY_INCHES), 0, 1);
 }
 
 function describe(site: Site): Dryness {
@@ -66,6 +69,9 @@ function describe(site: Site): Dryness {
     deviation: rootSumSquares(loss.deviation, c.droughtUncertainty * loss.mean),
     index: index.mean,
     indexDeviation: index.deviation,
+    lowYield:
+      LEAST_LOW_YIELD +
+      (1 - LEAST_LOW_YIELD) * clamp((NOT_LOW_YIELD - site.potential.bushelsPerAcre) / (NOT_LOW_YIELD - LOW_YIELD), 0, 1),
     storageKnown: storage !== null,
   };
 }
