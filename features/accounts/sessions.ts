@@ -75,6 +75,7 @@ export function browserCookie(token: string): SessionCookie {
 
 /** Opens a session for a person and answers the cookie that carries it (httpOnly, same-site, secure over https). */
 export async function openSession(personId: string): Promise<SessionCookie> {
+  await lucia().deleteExpiredSessions();
   const session = await lucia().createSession(personId, {});
   const cookie = lucia().createSessionCookie(session.id);
   return { name: cookie.name, value: cookie.value, attributes: cookie.attributes };

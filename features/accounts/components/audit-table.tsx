@@ -27,7 +27,7 @@ export function AuditTable({ lines }: { lines: AuditRow[] }) {
           <tr key={line.id}>
             <Td className="whitespace-nowrap text-mute max-sm:hidden">{formatMoment(line.at)}</Td>
             <Td className="whitespace-nowrap max-sm:hidden">{line.personName ?? 'Command line'}</Td>
-            <Td>
+            <Td className="[overflow-wrap:anywhere]">
               {line.summary}
               <span className="block text-mute text-sm sm:hidden">
                 {formatMoment(line.at)} · {line.personName ?? 'Command line'}
