@@ -66,12 +66,26 @@ export async function varietyOf(viewer: Viewer, varietyId: string): Promise<Line
 export async function lotsOf(viewer: Viewer, varietyId: string): Promise<SeedLot[]> {
   await varietyOf(viewer, varietyId);
   const lots = (await lotsByVariety([varietyId])).get(varietyId) ?? [];
+  return lots.map((lot) => lotFor(viewer, lot));
+}
+
+/** Seed lots of every variety of a season the viewer may see; growers get neither units nor prices. */
+export async function lotsOfLineUp(viewer: Viewer, season: number): Promise<SeedLot[]> {
+  const rows = await database()
+    .select({ id: varieties.id })
+    .from(varieties)
+    .where(and(inScope(viewer), eq(varieties.season, season)));
+  const lots = await lotsByVariety(rows.map((row) => row.id));
+  return [...lots.values()].flat().map((lot) => lotFor(viewer, lot));
+}
+
+function lotFor(viewer: Viewer, { createdAt, updatedAt, archivedAt, ...lot }: LotRow): SeedLot {
   const seesSupply = may(viewer, 'supply', 'read');
-  return lots.map(({ createdAt, updatedAt, archivedAt, ...lot }) => ({
+  return {
     ...lot,
     unitsOnHand: seesSupply ? lot.unitsOnHand : null,
     priceCentsPerUnit: seesSupply ? lot.priceCentsPerUnit : null,
-  }));
+  };
 }
 
 /**

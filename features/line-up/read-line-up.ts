@@ -1,5 +1,5 @@
-import { parse } from 'csv-parse/sync';
 import type { VarietyProfile } from '@/features/placement/engine/model';
+import { readDelimited } from '@/lib/csv';
 import { bad, good, type Outcome } from '@/lib/errors';
 import { COLUMNS, type Column, columnOfHeader, type LotColumns, parseCell } from './columns';
 import type { VarietyTraits } from './model';
@@ -30,23 +30,6 @@ export interface ReadLineUp {
 export type HeaderMatch = (Column['key'] | null)[];
 
 const MOST_ROWS = 20_000;
-
-/** Rows of delimited text (comma, semicolon or tab). A broken quote is a problem with its line. */
-export function rowsOfText(text: string): Outcome<string[][]> {
-  const clean = text.replace(/^\uFEFF/, '');
-  const first = clean.slice(0, clean.search(/\r|\n|$/));
-  const delimiter = [',', ';', '\t'].sort((one, other) => first.split(other).length - first.split(one).length)[0] as string;
-  try {
-    return good(
-      parse(clean, { delimiter, relax_column_count: true, skip_empty_lines: true, trim: true, to: MOST_ROWS + 1 }) as string[][],
-    );
-  } catch (error) {
-    const line = (error as { lines?: number }).lines;
-    return bad(
-      `The file could not be read at line ${line ?? '?'}: a quotation mark is out of place. Nothing was kept. Mend that line and try again.`,
-    );
-  }
-}
 
 /** Guesses the meaning of each header; the person corrects it. */
 export function matchHeaders(headers: string[]): HeaderMatch {
@@ -150,12 +133,14 @@ export function profileOfRow(row: LineUpRow): VarietyProfile {
 export function parseLineUpCsv(
   text: string,
 ): Outcome<{ varieties: VarietyProfile[]; withoutMaturity: string[]; notes: string[] }> {
-  const rows = rowsOfText(text);
-  if (!rows.ok) return rows;
-  const headers = rows.value[0];
+  const delimited = readDelimited(new TextEncoder().encode(text), 'The line-up');
+  if (!delimited.ok) return delimited;
+  if (delimited.value.problems.length > 0) return bad(delimited.value.problems);
+  const rows = delimited.value.rows.map((row) => row.cells);
+  const headers = rows[0];
   if (!headers) return bad('The line-up file is empty.');
   const match = matchHeaders(headers);
-  const read = readRows(rows.value, match);
+  const read = readRows(rows, match);
   if (!read.ok) return read;
   if (read.value.refused.length > 0) {
     return bad(
