@@ -66,7 +66,7 @@ export function Lots({ varietyId, lots, actions }: { varietyId: string; lots: Se
                       onClick={() => setEditing(editing === lot.id ? null : lot.id)}
                       aria-expanded={editing === lot.id}
                     >
-                      Change lot {lot.lotNumber}
+                      Change<span className="sr-only"> lot {lot.lotNumber}</span>
                     </Button>
                   </Td>
                 ) : null}

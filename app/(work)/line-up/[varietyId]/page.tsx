@@ -33,7 +33,7 @@ export default async function VarietyPage({ params }: { params: Promise<{ variet
         }
         actions={keeps ? <VarietySteps variety={variety} setPublished={setPublished} archive={archiveVariety} /> : undefined}
       />
-      <div className="grid items-start gap-7 lg:grid-cols-[minmax(0,26rem)_minmax(0,1fr)]">
+      <div className="grid items-start gap-7 lg:grid-cols-[minmax(0,25rem)_minmax(0,1fr)]">
         <SeedTag variety={variety} />
         <div className="flex flex-col gap-7">
           <section aria-labelledby="lots">
