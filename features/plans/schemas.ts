@@ -71,7 +71,14 @@ export const proposalRowsSchema = planKeySchema.extend({
     .max(5000),
 });
 
-export const makeLinkSchema = planKeySchema.extend({ days: z.coerce.number().int().min(1).max(120).default(45) });
+export const makeLinkSchema = planKeySchema.extend({
+  days: z.coerce
+    .number({ error: 'Days is a number.' })
+    .int('Days is a whole number.')
+    .min(1, 'A link is good for 1 to 400 days.')
+    .max(400, 'A link is good for 1 to 400 days.')
+    .default(60),
+});
 export const revokeLinkSchema = planKeySchema.extend({ linkId: id });
 
 /** A mark from the phone: the phone makes the id, so a mark sent twice is kept once. */

@@ -41,7 +41,14 @@ export function CrewLinks({
       <ActionForm action={withLink(make)} submit="Make a link" kind="plain" hidden={key}>
         {(answer) => (
           <>
-            <TextField name="days" label="Good for" unit="days" defaultValue="45" inputMode="numeric" className="max-w-40" />
+            <TextField
+              name="days"
+              label="Good for"
+              unit="days"
+              defaultValue={String(daysToPlantingEnd(season, now))}
+              inputMode="numeric"
+              className="max-w-40"
+            />
             {answer?.ok ? (
               <Notice kind="good" title="The link">
                 <a href={answer.value.words} className="break-all underline">
@@ -76,6 +83,11 @@ export function CrewLinks({
       ) : null}
     </section>
   );
+}
+
+/** Days until the end of June of the season, when the last beans are in; at least a week. */
+function daysToPlantingEnd(season: number, now: number): number {
+  return Math.min(400, Math.max(7, Math.ceil((Date.UTC(season, 6, 1) - now) / 86_400_000)));
 }
 
 /** The action as it is; named so that its words, which are the link, are shown as one. */

@@ -1,4 +1,5 @@
 import { Text, View } from '@react-pdf/renderer';
+import { FACTOR_COLOURS } from '@/features/placement/components/factor-colours';
 import type { Assessment } from '@/features/placement/engine/model';
 import { formatBushels } from '@/lib/format';
 
@@ -17,9 +18,16 @@ export function PdfLedger({ assessment }: { assessment: Assessment }) {
     <View style={{ marginTop: 3, fontSize: 8 }}>
       <Line bushels={formatBushels(assessment.potential)} words="the field can carry" />
       {named.map((line) => (
-        <Line key={line.factor} bushels={formatBushels(line.bushels)} words={`${line.label}: ${line.reason}`} />
+        <Line
+          key={line.factor}
+          bushels={formatBushels(line.bushels)}
+          words={`${line.label}: ${line.reason}`}
+          colour={FACTOR_COLOURS[line.factor]}
+        />
       ))}
-      {Math.abs(rest) >= 0.05 ? <Line bushels={formatBushels(rest)} words="all the rest together" /> : null}
+      {Math.abs(rest) >= 0.05 ? (
+        <Line bushels={formatBushels(rest)} words="all the rest together" colour={FACTOR_COLOURS.gathered} />
+      ) : null}
     </View>
   );
 }
