@@ -7,7 +7,8 @@ import { type InputFile, readInput, refuse } from './command';
 /** The parts of a shapefile that lie loose beside the .shp. */
 const SHAPEFILE_PARTS = ['.dbf', '.prj', '.shx', '.cpg'];
 
-async function filesOf(path: string): Promise<InputFile[]> {
+/** A file, and with a .shp the parts that lie beside it. */
+export async function filesWithParts(path: string): Promise<InputFile[]> {
   const file = await readInput(path);
   if (extname(path).toLowerCase() !== '.shp') return [file];
   const stem = basename(path, extname(path));
@@ -30,7 +31,7 @@ export async function tryBoundaries(
   path: string,
   choice: BoundaryChoice,
 ): Promise<{ read: ReadBoundaries | null; problems: string[] }> {
-  const outcome = await readBoundaries(await filesOf(path), choice);
+  const outcome = await readBoundaries(await filesWithParts(path), choice);
   if (!outcome.ok) return { read: null, problems: outcome.problems.map((problem) => problem.message) };
   const { unknownCrs } = outcome.value;
   if (unknownCrs) {

