@@ -12,7 +12,8 @@ const PARTS = new Set(['shp', 'dbf', 'prj', 'cpg']);
 /** The files of one layer, whatever folder and case they come in. */
 type LayerFiles = Partial<Record<string, Uint8Array>>;
 
-function layersOf(files: NamedBytes[]): Map<string, LayerFiles> {
+/** Files of a shapefile by layer: parts of one name in one folder belong together. */
+export function layersOf(files: NamedBytes[]): Map<string, LayerFiles> {
   const layers = new Map<string, LayerFiles>();
   for (const { name, bytes } of files) {
     const extension = extensionOf(name);
@@ -92,7 +93,8 @@ function readLayer(name: string, files: LayerFiles, options: ReadOptions): Outco
   });
 }
 
-function coordinateSystem(
+/** The coordinate system of a layer: as chosen, as its .prj says, else a guess marked unknown. */
+export function coordinateSystem(
   prj: Uint8Array | undefined,
   chosen: string | undefined,
   example: [number, number],
@@ -124,7 +126,8 @@ function coordinateSystem(
   return good({ definition: definition.ok ? definition.value : 'EPSG:4326', known: false });
 }
 
-function attributesOf(
+/** Attributes by record; what is missing is said in the notes. */
+export function attributesOf(
   dbf: Uint8Array | undefined,
   cpg: Uint8Array | undefined,
   notes: string[],
