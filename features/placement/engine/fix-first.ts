@@ -44,8 +44,8 @@ function lime(site: Site, variety: VarietyProfile, now: number): FixFirst | null
   if (worth < WORTH_NAMING) return null;
   const rate = field.limeTonsPerAcre;
   const tons = rate?.tons ?? null;
-  const rateWords =
-    tons === null ? 'rate unknown, take a buffer test' : `${tons.toFixed(1)} t/ac by ${rate?.method ?? 'the buffer test'}`;
+  const unknownRate = field.bufferPh === null ? 'rate unknown, take a buffer test' : 'take the rate from the laboratory’s report';
+  const rateWords = tons === null ? unknownRate : `${tons.toFixed(1)} t/ac by ${rate?.method ?? 'the buffer test'}`;
   return {
     factor: 'soil-ph',
     title: `Lime ${acres.toFixed(1)} ac`,
