@@ -15,6 +15,7 @@ import { askPasswordResetSchema, resetPasswordSchema } from './schemas';
 import { browserCookie, closeAllSessions, type SessionCookie } from './sessions';
 
 const RESET_MINUTES = 60;
+const MOST_MAILS_A_DAY = 10;
 const SHORTEST_ANSWER_MILLISECONDS = 400;
 
 function problemsOf(error: { issues: { message: string; path: PropertyKey[] }[] }) {
@@ -50,12 +51,13 @@ async function mailResetLink(email: string): Promise<void> {
   });
   await database().transaction(
     async (transaction) => {
-      // One mail a minute: asking again at once must not flood somebody's mailbox.
+      // One mail a minute and ten a day: asking again must not flood somebody's mailbox.
+      const now = Date.now();
       const recent = await transaction
-        .select({ id: passwordResets.id })
+        .select({ createdAt: passwordResets.createdAt })
         .from(passwordResets)
-        .where(and(eq(passwordResets.personId, person.id), gt(passwordResets.createdAt, Date.now() - 60_000)));
-      if (recent.length > 0) return;
+        .where(and(eq(passwordResets.personId, person.id), gt(passwordResets.createdAt, now - 86_400_000)));
+      if (recent.length >= MOST_MAILS_A_DAY || recent.some((one) => one.createdAt > now - 60_000)) return;
       const id = createId();
       await transaction
         .insert(passwordResets)

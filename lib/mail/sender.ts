@@ -63,6 +63,11 @@ function isRefusedForGood(error: unknown): boolean {
   return code === 'EENVELOPE' && responseCode !== undefined && responseCode >= 500;
 }
 
+/** A sent mail without the secrets of its links, so that a copy of the database opens no account. */
+export function withoutSecrets(text: string): string {
+  return text.replace(/\/(invitation|reset-password|sheet)\/[\w-]{16,}/g, '/$1/…');
+}
+
 async function sendOne(mail: Row, transporter: Transporter, now: number): Promise<void> {
   let failure: unknown = null;
   try {
@@ -80,7 +85,16 @@ async function sendOne(mail: Row, transporter: Transporter, now: number): Promis
     failure = error;
   }
   if (failure === null) {
-    await database().update(outboxMails).set({ state: 'sent', sentAt: now, lastError: null }).where(eq(outboxMails.id, mail.id));
+    await database()
+      .update(outboxMails)
+      .set({
+        state: 'sent',
+        sentAt: now,
+        lastError: null,
+        text: withoutSecrets(mail.text),
+        html: withoutSecrets(mail.html),
+      })
+      .where(eq(outboxMails.id, mail.id));
     return;
   }
   const over = mail.attempts >= MOST_ATTEMPTS || isRefusedForGood(failure);

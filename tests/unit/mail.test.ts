@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { invitationMail, passwordResetMail } from '@/features/accounts/mails';
 import { renderMail } from '@/lib/mail/layout';
-import { retryDelayMilliseconds } from '@/lib/mail/sender';
+import { retryDelayMilliseconds, withoutSecrets } from '@/lib/mail/sender';
 
 describe('a mail', () => {
   test('carries its link in the plain text and in the HTML', () => {
@@ -36,5 +36,24 @@ describe('a mail', () => {
 describe('trying a mail again', () => {
   test('waits 1, 2, 4 minutes and at most 6 hours', () => {
     expect([1, 2, 3, 20].map((attempts) => retryDelayMilliseconds(attempts) / 60_000)).toEqual([1, 2, 4, 360]);
+  });
+});
+
+describe('a mail that was sent', () => {
+  test('is kept without the secrets of its links, and with everything else', () => {
+    const link = 'https://hilum.example/invitation/mO7lafd3nDL9NZiNGF1pB7t_X5iZL0bj';
+    const mail = invitationMail({
+      name: 'Lena',
+      inviter: 'Ada',
+      dealership: 'Otter Prairie Seed',
+      role: 'grower',
+      link,
+      days: 14,
+    });
+    for (const part of [mail.text, mail.html]) {
+      expect(withoutSecrets(part)).not.toContain('mO7laf');
+      expect(withoutSecrets(part)).toContain('https://hilum.example/invitation/…');
+    }
+    expect(withoutSecrets('https://hilum.example/plans/0crxd5rgpea53jwqqywy/2027')).toContain('0crxd5rgpea53jwqqywy');
   });
 });

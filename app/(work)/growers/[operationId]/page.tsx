@@ -18,7 +18,7 @@ import { AddFarmForm, RenameFarmForm } from '@/features/growers/components/farm-
 import { OperationForm } from '@/features/growers/components/operation-form';
 import { PeopleList } from '@/features/growers/components/people-list';
 import { StepList } from '@/features/growers/components/steps';
-import { farmsOf, progressOfOperation } from '@/features/growers/queries';
+import { farmsOf, operationOf, progressOfOperation } from '@/features/growers/queries';
 import { nextThing, stepsOf } from '@/features/growers/steps';
 import { formatMoment } from '@/lib/dates';
 import { formatAcres } from '@/lib/format';
@@ -27,10 +27,17 @@ import { LinkButton } from '@/lib/ui/button';
 import { OneButtonForm } from '@/lib/ui/one-button-form';
 import { Figure, Notice, Page, PageHeader, Panel } from '@/lib/ui/page';
 
-export const metadata: Metadata = { title: 'Grower' };
+interface Props {
+  params: Promise<{ operationId: string }>;
+}
+
+export async function generateMetadata({ params }: Props): Promise<Metadata> {
+  const viewer = await requireViewer();
+  return { title: (await found(operationOf(viewer, (await params).operationId))).name };
+}
 
 /** One operation: how far it is, its people, its farms. */
-export default async function GrowerPage({ params }: { params: Promise<{ operationId: string }> }) {
+export default async function GrowerPage({ params }: Props) {
   const viewer = await requireViewer();
   const { operationId } = await params;
   const operation = await found(progressOfOperation(viewer, operationId));
