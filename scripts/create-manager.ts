@@ -20,9 +20,9 @@ async function ask(given: string | undefined, question: string, hidden = false):
     );
     process.exit(2);
   }
-  process.stdout.write(`${question}: `);
+  if (hidden) process.stdout.write(`${question}: `);
   const prompt = createInterface({ input: process.stdin, output: hidden ? unseen : process.stdout, terminal: true });
-  const answer = await prompt.question('');
+  const answer = await prompt.question(`${question}: `);
   prompt.close();
   if (hidden) process.stdout.write('\n');
   return answer;
