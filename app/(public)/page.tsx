@@ -3,6 +3,7 @@ import { redirect } from 'next/navigation';
 import { Landing } from '@/features/accounts/components/landing';
 import { startOf } from '@/features/accounts/places';
 import { currentViewer } from '@/features/accounts/viewer';
+import { FACTOR_COLOURS } from '@/features/placement/components/factor-colours';
 
 export const metadata: Metadata = { title: { absolute: 'Hilum: soybean placement' } };
 
@@ -10,5 +11,5 @@ export const metadata: Metadata = { title: { absolute: 'Hilum: soybean placement
 export default async function HomePage() {
   const viewer = await currentViewer();
   if (viewer) redirect(startOf(viewer.role));
-  return <Landing />;
+  return <Landing colours={FACTOR_COLOURS} />;
 }

@@ -1,18 +1,17 @@
-import clsx from 'clsx';
 import { LinkButton } from '@/lib/ui/button';
 import { CAUTIONS } from '@/lib/ui/cautions';
 import { SeedTag } from '@/lib/ui/seed-tag';
 
 /** The lines of a ledger as they are printed, without figures: those are worked out for a real field. */
 const LEDGER = [
-  { swatch: 'bg-slate', name: 'Maturity and freeze', weighs: 'the season line to R7 against the killing freezes on record' },
+  { factor: 'freeze', name: 'Maturity and freeze', weighs: 'the season line to R7 against the killing freezes on record' },
   {
-    swatch: 'bg-straw',
+    factor: 'soil-ph',
     name: 'Soil pH',
     weighs: 'the share of the field outside the sweet spot, and what lime would bring back',
   },
-  { swatch: 'bg-rust', name: 'Wet feet', weighs: 'drainage against the variety’s field tolerance and Rps genes' },
-  { swatch: 'bg-bar-bloom', name: 'Row width', weighs: 'how soon this bush type closes these rows' },
+  { factor: 'wet-feet', name: 'Wet feet', weighs: 'drainage against the variety’s field tolerance and Rps genes' },
+  { factor: 'row-width', name: 'Row width', weighs: 'how soon this bush type closes these rows' },
 ] as const;
 
 const STEPS = [
@@ -48,8 +47,8 @@ const STEPS = [
   },
 ] as const;
 
-/** What Hilum is, for people who are not signed in. */
-export function Landing() {
+/** What Hilum is, for people who are not signed in. `colours` are those of the factors, as every ledger has them. */
+export function Landing({ colours }: { colours: Record<(typeof LEDGER)[number]['factor'], string> }) {
   return (
     <main id="main">
       <div className="mx-auto grid max-w-[84rem] gap-x-16 gap-y-16 px-4 pt-10 pb-14 lg:grid-cols-[minmax(0,1.15fr)_minmax(0,1fr)] lg:px-10 lg:pt-20 lg:pb-20">
@@ -90,7 +89,7 @@ export function Landing() {
                 <tr key={line.name} className="border-line border-b">
                   <th scope="row" className="py-3 pr-3 font-normal">
                     <span className="flex gap-3">
-                      <span aria-hidden="true" className={clsx('mt-1 size-3 shrink-0', line.swatch)} />
+                      <span aria-hidden="true" className="mt-1 size-3 shrink-0" style={{ background: colours[line.factor] }} />
                       <span>
                         <span className="font-semibold">{line.name}</span>
                         <span className="block text-mute">{line.weighs}</span>

@@ -26,6 +26,9 @@ export function operationInAddress(path: string, asked: string | null): string |
   return asked ?? /^\/(?:growers|plans)\/([^/]+)/.exec(path)?.[1] ?? null;
 }
 
+/** Pages that look at the first operation when their address names none. */
+const LOOK_AT_THE_FIRST = /^\/(fields|fields\/import|soil\/import)$/;
+
 /** The operation being looked at, kept while pages that name none are visited (a field, the line-up). */
 function useOperationLookedAt(path: string, operations: BarOperation[]): BarOperation | null {
   const named = operationInAddress(path, useSearchParams().get('operation'));
@@ -33,7 +36,7 @@ function useOperationLookedAt(path: string, operations: BarOperation[]): BarOper
   useEffect(() => {
     if (named !== null) setLast(named);
   }, [named]);
-  const id = named ?? last;
+  const id = named ?? (LOOK_AT_THE_FIRST.test(path) ? operations[0]?.id : last);
   if (operations.length === 1) return operations[0] ?? null;
   return operations.find((one) => one.id === id) ?? null;
 }
