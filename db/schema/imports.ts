@@ -21,7 +21,9 @@ export const uploads = sqliteTable(
     personId: text('person_id')
       .notNull()
       .references(() => people.id),
-    kind: text('kind', { enum: ['boundaries', 'soil-tests', 'soil-survey', 'line-up'] }).notNull(),
+    kind: text('kind', {
+      enum: ['boundaries', 'soil-tests', 'soil-survey', 'line-up', 'maturity-zones', 'climate-stations'],
+    }).notNull(),
     season: integer('season').notNull(),
     state: text('state', { enum: ['received', 'checked', 'kept', 'failed', 'discarded', 'undone'] }).notNull(),
     /** What the reader understood (features, rows, columns, notes), JSON of the kind's own shape. */

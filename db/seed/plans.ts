@@ -2,7 +2,7 @@ import { eq } from 'drizzle-orm';
 import { database } from '@/db/client';
 import { dealerships, operations, people } from '@/db/schema';
 import type { Viewer } from '@/features/accounts/model';
-import { scoreOperation } from '@/features/placement/changes';
+import { scoreOperation } from '@/features/placement/changes/score';
 import { fillFromPicks } from '@/features/plans/changes/rows';
 import { agree, propose } from '@/features/plans/changes/steps';
 import { planOf } from '@/features/plans/queries';

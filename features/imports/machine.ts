@@ -12,7 +12,14 @@ import type { NamedBytes } from '@/lib/archive';
 import { bad, good, NotAllowedError, NotFoundError, type Outcome } from '@/lib/errors';
 import { groupBy } from '@/lib/group';
 import { createId } from '@/lib/ids';
-import { type ImportKind, type ImportState, LARGEST_UPLOAD_BYTES, MOST_FILES, type UploadSummary } from './model';
+import {
+  type ImportKind,
+  type ImportState,
+  KINDS_OF_THE_DEALERSHIP,
+  LARGEST_UPLOAD_BYTES,
+  MOST_FILES,
+  type UploadSummary,
+} from './model';
 
 /**
  * The import machine behind every import: originals are stored as they stream in, then inspected, checked and kept by the
@@ -27,6 +34,8 @@ const RIGHT_OF = {
   'soil-tests': ['soil', 'create'],
   'soil-survey': ['soil', 'create'],
   'line-up': ['variety', 'change'],
+  'maturity-zones': ['dealership', 'change'],
+  'climate-stations': ['dealership', 'change'],
 } as const;
 
 /** May this viewer bring in this kind at all? */
@@ -36,9 +45,15 @@ export function mayImport(viewer: Viewer, kind: ImportKind): boolean {
 }
 
 function inScope(viewer: Viewer): SQL | undefined {
-  // The line-up belongs to the dealership; everything else to an operation in scope.
-  const lineUp = mayImport(viewer, 'line-up') ? eq(uploads.kind, 'line-up') : undefined;
-  return and(eq(uploads.dealershipId, viewer.dealershipId), or(lineUp, operationIdInScope(viewer, uploads.operationId)));
+  // Some kinds belong to the dealership; everything else to an operation in scope.
+  const ofDealership = KINDS_OF_THE_DEALERSHIP.filter((kind) => mayImport(viewer, kind));
+  return and(
+    eq(uploads.dealershipId, viewer.dealershipId),
+    or(
+      ofDealership.length > 0 ? inArray(uploads.kind, ofDealership) : undefined,
+      operationIdInScope(viewer, uploads.operationId),
+    ),
+  );
 }
 
 /** An incoming file: its name and its bytes as they arrive. */
@@ -57,7 +72,7 @@ export async function receiveUpload(
   files: AsyncIterable<IncomingFile>,
 ): Promise<Outcome<{ uploadId: string }>> {
   if (!mayImport(viewer, about.kind)) throw new NotAllowedError('Your account may not bring this in.');
-  if (about.kind === 'line-up') about = { ...about, operationId: null };
+  if (KINDS_OF_THE_DEALERSHIP.includes(about.kind)) about = { ...about, operationId: null };
   else if (!about.operationId) return bad('Say which operation the file belongs to.');
   else await requireOperation(viewer, about.operationId);
 

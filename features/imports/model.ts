@@ -1,6 +1,9 @@
 /** What an import is, whatever it brings. */
-export const IMPORT_KINDS = ['boundaries', 'soil-tests', 'soil-survey', 'line-up'] as const;
+export const IMPORT_KINDS = ['boundaries', 'soil-tests', 'soil-survey', 'line-up', 'maturity-zones', 'climate-stations'] as const;
 export type ImportKind = (typeof IMPORT_KINDS)[number];
+
+/** Kinds that belong to the dealership as a whole and not to one operation. */
+export const KINDS_OF_THE_DEALERSHIP: readonly ImportKind[] = ['line-up', 'maturity-zones', 'climate-stations'];
 
 /** received → checked → kept; or failed, or discarded; kept → undone. */
 export type ImportState = 'received' | 'checked' | 'kept' | 'failed' | 'discarded' | 'undone';

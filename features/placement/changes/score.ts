@@ -7,9 +7,9 @@ import type { Viewer } from '@/features/accounts/model';
 import { may } from '@/features/accounts/rights';
 import { requireOperation } from '@/features/accounts/scope';
 import { bad, good, NotFoundError, type Outcome } from '@/lib/errors';
-import { rank } from './engine/rank';
-import { ENGINE_VERSION } from './engine/version';
-import { engineInputs, gatherInputs, hashOfInputs, hashOfShared, supplyForRanking } from './inputs';
+import { rank } from '../engine/rank';
+import { ENGINE_VERSION } from '../engine/version';
+import { engineInputs, gatherInputs, hashOfInputs, hashOfShared, supplyForRanking } from '../inputs';
 
 const scoreSchema = z.object({ operationId: z.string().min(1), season: z.number().int() });
 
