@@ -46,3 +46,27 @@ describe('every server action, called by somebody who is not signed in', () => {
     }
   });
 });
+
+const routes = import.meta.glob<Record<string, unknown>>('../../app/api/**/route.ts');
+
+/** The crew’s planting sheet: its address carries the secret. */
+const FOR_THE_CREW = /\/api\/v1\/sheet\//;
+const METHODS = ['GET', 'POST', 'PUT', 'PATCH', 'DELETE'];
+
+describe('every route, asked by somebody who is not signed in', () => {
+  test('there are routes to try', () => {
+    expect(Object.keys(routes).length).toBeGreaterThanOrEqual(3);
+  });
+
+  test.each(Object.keys(routes).filter((path) => !FOR_THE_CREW.test(path)))('%s answers 401', async (path) => {
+    const handlers = await (routes[path] as () => Promise<Record<string, unknown>>)();
+    const params = new Proxy({}, { get: (_target, name) => (name === 'season' ? '2027' : 'guessed') });
+    for (const method of METHODS) {
+      const handler = handlers[method];
+      if (typeof handler !== 'function') continue;
+      const request = new Request('http://127.0.0.1:3000/api', { method, headers: { host: '127.0.0.1:3000' } });
+      const response = await handler(request, { params: Promise.resolve(params) });
+      expect({ method, status: response.status }).toEqual({ method, status: 401 });
+    }
+  });
+});
