@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import { isZip, type NamedBytes, unpack } from '@/lib/archive';
 import { bad, good, type Outcome } from '@/lib/errors';
 import { isOldWorkbook } from '@/lib/spreadsheet';
@@ -18,9 +19,14 @@ export interface ReadSoilTests {
   problems: ReadProblem[];
   /** Asked once, because no header says it. */
   asks: { bufferMethod: boolean; phosphorusMethod: boolean; nutrientUnit: boolean };
+  /** Of each table's headers, to remember how its columns were matched. */
+  signatures: { table: string; signature: string; remembered: boolean }[];
 }
 
-export type SoilReadOptions = SampleOptions & ReadTableOptions;
+export interface SoilReadOptions extends SampleOptions, ReadTableOptions {
+  /** Columns matched by hand before, by the signature of their headers. */
+  layouts?: Record<string, Record<string, string>>;
+}
 
 export const SOIL_LIMITS = { samples: 200_000, seconds: 120, memoryMegabytes: 1500 } as const;
 const MOST_PROBLEMS = 1000;
@@ -33,6 +39,7 @@ const nothing = (problems: ReadProblem[]): ReadSoilTests => ({
   notes: [],
   problems,
   asks: { bufferMethod: false, phosphorusMethod: false, nutrientUnit: false },
+  signatures: [],
 });
 
 /**
@@ -72,7 +79,11 @@ export async function readSoilTests(files: NamedBytes[], options: SoilReadOption
     ]);
   }
 
-  const read = tables.map((table) => ({ table, ...samplesOfTable(table, options) }));
+  const read = tables.map((table) => {
+    const signature = headerSignature(table.headers);
+    const layout = options.layouts?.[signature];
+    return { table, signature, remembered: layout !== undefined, ...samplesOfTable(table, withLayout(options, layout)) };
+  });
   const joined = joinTables(read.map(({ table, samples }) => ({ name: table.name, samples })));
   for (const { table, problems: rows } of read) {
     problems.push(...table.problems.map((message) => ({ message: `${table.name}: ${message}` })));
@@ -95,6 +106,26 @@ export async function readSoilTests(files: NamedBytes[], options: SoilReadOption
       phosphorusMethod: read.some(({ asks }) => asks.phosphorusMethod),
       nutrientUnit: read.some(({ asks }) => asks.nutrientUnit),
     },
+    signatures: read.map(({ table, signature, remembered }) => ({ table: table.name, signature, remembered })),
+  };
+}
+
+/** The same headers have the same signature, whatever file they come in. */
+export function headerSignature(headers: readonly string[]): string {
+  return createHash('sha256')
+    .update(headers.map((header) => header.trim().toLowerCase()).join('\u0000'))
+    .digest('hex')
+    .slice(0, 32);
+}
+
+/** What was chosen now goes before what was chosen for this layout before. Answers stand in a layout under "@" and their name. */
+function withLayout(options: SoilReadOptions, layout: Record<string, string> | undefined): SampleOptions {
+  if (!layout) return options;
+  return {
+    columns: options.columns ?? layout,
+    bufferMethod: options.bufferMethod ?? layout['@bufferMethod'],
+    phosphorusMethod: options.phosphorusMethod ?? layout['@phosphorusMethod'],
+    nutrientUnit: options.nutrientUnit ?? (layout['@nutrientUnit'] === 'lb/ac' ? 'lb/ac' : undefined),
   };
 }
 
