@@ -1,3 +1,5 @@
+import { existsSync, readdirSync } from 'node:fs';
+import { join } from 'node:path';
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { AUDIT_KINDS, beginningsOf, cursorOf, readCursor } from '@/features/accounts/audit';
@@ -82,6 +84,14 @@ describe('places', () => {
     expect(settingsOf('grower', true).map((one) => one.label)).toEqual(['My account']);
     expect(settingsOf('manager', true).map((one) => one.href)).toContain('/outbox');
     expect(settingsOf('manager', false).map((one) => one.href)).not.toContain('/outbox');
+  });
+
+  test('each leads to a page, and every page of the settings is in the menu', () => {
+    const pageOf = (href: string) => join('app', '(work)', href, 'page.tsx');
+    const listed = [...PLACES, ...settingsOf('manager', true)].map((one) => one.href);
+    expect(listed.filter((href) => !existsSync(pageOf(href)))).toEqual([]);
+    const settings = readdirSync('app/(work)/settings').filter((name) => existsSync(pageOf(`/settings/${name}`)));
+    expect(settings.filter((name) => !listed.includes(`/settings/${name}`))).toEqual([]);
   });
 
   test('the bar knows the operation an address is about', () => {
