@@ -207,6 +207,8 @@ export interface PlanView {
   operationName: string;
   dealershipName: string;
   season: number;
+  /** What a bushel is reckoned at, cents. */
+  soybeanPriceCentsPerBushel: number;
   state: PlanState;
   revision: number;
   signedName: string | null;

@@ -46,7 +46,13 @@ export async function readPlan(
 ): Promise<PlanView> {
   const from = connection ?? database();
   const [operation] = await from
-    .select({ id: operations.id, name: operations.name, dealershipId: operations.dealershipId, dealershipName: dealerships.name })
+    .select({
+      id: operations.id,
+      name: operations.name,
+      dealershipId: operations.dealershipId,
+      dealershipName: dealerships.name,
+      soybeanPriceCentsPerBushel: dealerships.soybeanPriceCentsPerBushel,
+    })
     .from(operations)
     .innerJoin(dealerships, eq(dealerships.id, operations.dealershipId))
     .where(eq(operations.id, operationId));
@@ -181,6 +187,7 @@ export async function readPlan(
     operationName: operation.name,
     dealershipName: operation.dealershipName,
     season,
+    soybeanPriceCentsPerBushel: operation.soybeanPriceCentsPerBushel,
     state,
     revision: plan?.revision ?? 0,
     signedName: plan?.signedName ?? null,

@@ -126,6 +126,12 @@ describe('what a plan is told beside its rows', () => {
     expect(solution.shadow.good).toBeCloseTo(10, 6);
   });
 
+  test('a count of varieties that is used up is binding', async () => {
+    const solution = await solvePlan(problemSchema.parse({ ...base, maxVarieties: 1 }));
+    expect(solution.objective).toBeCloseTo(100_000, 3);
+    expect(solution.binding).toEqual(['number of varieties']);
+  });
+
   test('wishes that clash are named with the smallest giving way', async () => {
     const solution = await solvePlan(problemSchema.parse({ ...base, maxShare: 0.4, locks: [{ field: 'A', variety: 'good' }] }));
     expect(solution.status).toBe('infeasible');

@@ -63,6 +63,7 @@ export function aPlanView(lines: PlanLine[] = [aLine()]): PlanView {
     operationName: 'Teal Creek Farms',
     dealershipName: 'Cedar Ridge Seed',
     season: 2027,
+    soybeanPriceCentsPerBushel: 1050,
     state: 'agreed',
     revision: 7,
     signedName: 'Ada Holt',

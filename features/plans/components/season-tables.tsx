@@ -8,7 +8,7 @@ import { StateTag } from './state-tag';
 /** Units asked against units on hand, a line a variety. */
 export function SeasonSupply({ book }: { book: SeasonBook }) {
   return (
-    <section aria-labelledby="supply">
+    <section aria-labelledby="supply" className="min-w-0">
       <h2 id="supply" className="mb-2 text-xl">
         Seed asked and on hand
       </h2>
@@ -16,12 +16,18 @@ export function SeasonSupply({ book }: { book: SeasonBook }) {
         <thead>
           <tr>
             <Th>Variety</Th>
-            <Th numeric>Acres</Th>
+            <Th numeric className="max-sm:hidden">
+              Acres
+            </Th>
             <Th numeric className="max-sm:hidden">
               Draft
             </Th>
-            <Th numeric>Proposed</Th>
-            <Th numeric>Agreed</Th>
+            <Th numeric className="max-sm:px-2">
+              Proposed
+            </Th>
+            <Th numeric className="max-sm:px-2">
+              Agreed
+            </Th>
             <Th numeric className="max-sm:hidden">
               On hand
             </Th>
@@ -37,7 +43,9 @@ export function SeasonSupply({ book }: { book: SeasonBook }) {
                 <span className="text-mute whitespace-nowrap">RM {formatTenth(variety.relativeMaturity)}</span>{' '}
                 {variety.release === 'full' ? null : <Tag>{variety.release}</Tag>}
               </Td>
-              <Td numeric>{formatAcres(variety.acres)}</Td>
+              <Td numeric className="max-sm:hidden">
+                {formatAcres(variety.acres)}
+              </Td>
               <Td numeric className="max-sm:hidden text-mute">
                 {formatNumber(variety.unitsDraft)}
               </Td>

@@ -237,8 +237,12 @@ function limitsOf(highs: Highs, problem: PlanProblem, program: Program, result: 
     const idle = program.openColumn.length > 0 && row.columns.some((column) => fixed.get(column) === 0);
     // Full: no further whole piece of it could be taken.
     const full = upper !== Number.POSITIVE_INFINITY && upper - activity < Math.min(smallest, 1);
+    if (row.limit === 'number of varieties') {
+      if (full) binding.add(row.limit);
+      return;
+    }
     if (idle) return;
-    if (dual > 1e-6 || (row.limit === 'number of varieties' && full)) binding.add(row.limit);
+    if (dual > 1e-6) binding.add(row.limit);
     if (row.supplyOf !== null && dual > 1e-6) shadow[problem.varieties[row.supplyOf]?.id as string] = dual;
   });
   return { binding: [...binding], shadow };

@@ -12,6 +12,7 @@ import {
   reopenPlan,
   revokeSheetLink,
   takeOffRow,
+  takeProposal,
   withdrawPlan,
 } from '@/features/plans/actions';
 import { CrewLinks } from '@/features/plans/components/crew-links';
@@ -19,6 +20,7 @@ import { ExportMenu } from '@/features/plans/components/export-menu';
 import { PlanBoard } from '@/features/plans/components/plan-board';
 import { PlanHistory } from '@/features/plans/components/plan-history';
 import { PlanSteps } from '@/features/plans/components/plan-steps';
+import { SolverPanel } from '@/features/plans/components/solver-panel';
 import { StateTag } from '@/features/plans/components/state-tag';
 import { planOf, sheetLinksOf } from '@/features/plans/queries';
 import { mayStep } from '@/features/plans/states';
@@ -55,6 +57,7 @@ export default async function PlanPage(props: Props) {
   const { operationId, season } = view;
   const dealershipSide = may(viewer, 'supply', 'read');
   const placed = view.lines.filter((line) => line.variety).length;
+  const editable = may(viewer, 'plan', 'change') && mayStep('edit', view.state, viewer.role);
   const shared = ['proposed', 'agreed', 'planted', 'harvested'].includes(view.state);
   return (
     <Page>
@@ -64,6 +67,21 @@ export default async function PlanPage(props: Props) {
         aside={<StateTag state={view.state} />}
         actions={
           <div className="no-print flex flex-wrap gap-2">
+            {editable && view.lines.length > 0 ? (
+              <SolverPanel
+                operationId={operationId}
+                season={season}
+                revision={view.revision}
+                lines={view.lines.map(({ fieldId, fieldName, partName, variety, locked }) => ({
+                  fieldId,
+                  fieldName,
+                  partName,
+                  variety,
+                  locked,
+                }))}
+                take={takeProposal}
+              />
+            ) : null}
             {placed > 0 ? <ExportMenu operationId={operationId} season={season} /> : null}
             <PlanSteps
               role={viewer.role}
@@ -107,7 +125,7 @@ export default async function PlanPage(props: Props) {
           <PlanBoard
             view={view}
             dealershipSide={dealershipSide}
-            editable={may(viewer, 'plan', 'change') && mayStep('edit', view.state, viewer.role)}
+            editable={editable}
             actions={{ editRow, takeOffRow, fillPlan }}
           />
         )}
