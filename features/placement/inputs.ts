@@ -1,5 +1,4 @@
 import 'server-only';
-import { booleanPointInPolygon } from '@turf/turf';
 import { and, eq, inArray } from 'drizzle-orm';
 import { database } from '@/db/client';
 import { addedStations, coefficientOverrides, fieldWeather, maturityZones } from '@/db/schema';
@@ -18,6 +17,8 @@ import { climateForPlace } from './climate/place';
 import type { FieldProfile, PlacementRules, SeasonContext, VarietyProfile } from './engine/model';
 import { ENGINE_VERSION } from './engine/version';
 import { fieldProfile } from './profile';
+import { usableOverrides } from './rules';
+import { zoneAt } from './zones';
 
 /** Everything kept of one field that bears on its ranking, as it stands in the database. */
 export interface FieldInputs {
@@ -56,8 +57,8 @@ export async function sharedInputs(viewer: Viewer, season: number): Promise<Shar
     season,
     varieties,
     zones: zones.sort((one, other) => (one.id < other.id ? -1 : 1)),
-    overrides: Object.fromEntries(overrides.map((one) => [one.name, one.value]).sort()),
-    stations: stations.map((one) => one.normals as Station),
+    overrides: usableOverrides(overrides),
+    stations: stations.map((one) => one.normals as Station).sort((one, other) => (one.id < other.id ? -1 : 1)),
   };
 }
 
@@ -118,7 +119,7 @@ async function weatherOf(fieldIds: string[], season: number): Promise<Map<string
 }
 
 function zoneOf(field: Field, shared: SharedInputs): PlacementRules['zone'] {
-  const zone = shared.zones.find((one) => booleanPointInPolygon([field.longitude, field.latitude], one.geometry));
+  const zone = zoneAt(shared.zones, field.longitude, field.latitude);
   return zone
     ? { name: zone.name, relativeMaturityFrom: zone.relativeMaturityFrom, relativeMaturityTo: zone.relativeMaturityTo }
     : null;

@@ -1,12 +1,15 @@
 import 'server-only';
-import { and, eq, inArray } from 'drizzle-orm';
+import { and, asc, eq, inArray } from 'drizzle-orm';
 import { database } from '@/db/client';
-import { fieldScores } from '@/db/schema';
+import { addedStations, coefficientOverrides, fieldScores, maturityZones } from '@/db/schema';
 import type { Viewer } from '@/features/accounts/model';
+import { may } from '@/features/accounts/rights';
 import type { Field, FieldFacts } from '@/features/fields/model';
 import { fieldOf } from '@/features/fields/queries';
 import type { SoilMapUnit, SoilSample } from '@/features/soil/model';
 import type { FieldSurface } from '@/features/soil/surface';
+import { NotAllowedError } from '@/lib/errors';
+import type { Station } from './climate/normals';
 import type { Ranking, VarietyProfile } from './engine/model';
 import { ENGINE_VERSION } from './engine/version';
 import {
@@ -20,6 +23,8 @@ import {
   supplyForRanking,
 } from './inputs';
 import { phSurface } from './profile';
+import { usableOverrides } from './rules';
+import type { MaturityZone } from './zones';
 
 export interface StoredScore {
   ranking: Ranking;
@@ -114,4 +119,52 @@ export async function placementOf(viewer: Viewer, fieldId: string, season: numbe
     samples: inputs.samples,
     mapUnits: inputs.mapUnits,
   };
+}
+
+function requireManager(viewer: Viewer): void {
+  if (!may(viewer, 'dealership', 'change')) throw new NotAllowedError('Only a manager sees and sets this.');
+}
+
+/** Maturity zones of the viewer's dealership, by name. Managers only. */
+export async function zonesOf(viewer: Viewer): Promise<MaturityZone[]> {
+  requireManager(viewer);
+  const rows = await database()
+    .select()
+    .from(maturityZones)
+    .where(eq(maturityZones.dealershipId, viewer.dealershipId))
+    .orderBy(asc(maturityZones.relativeMaturityFrom), asc(maturityZones.name));
+  return rows.map(({ id, name, geometry, relativeMaturityFrom, relativeMaturityTo }) => ({
+    id,
+    name,
+    geometry,
+    relativeMaturityFrom,
+    relativeMaturityTo,
+  }));
+}
+
+/** The dealership's own values of planning coefficients, by name; a name that is missing stands at its usual value. Managers only. */
+export async function rulesOf(viewer: Viewer): Promise<Record<string, number>> {
+  requireManager(viewer);
+  const rows = await database()
+    .select()
+    .from(coefficientOverrides)
+    .where(eq(coefficientOverrides.dealershipId, viewer.dealershipId));
+  return usableOverrides(rows);
+}
+
+export interface AddedStation {
+  id: string;
+  station: Station;
+  createdAt: number;
+}
+
+/** Climate stations that the dealership added, by name. Managers only. */
+export async function stationsOf(viewer: Viewer): Promise<AddedStation[]> {
+  requireManager(viewer);
+  const rows = await database()
+    .select()
+    .from(addedStations)
+    .where(eq(addedStations.dealershipId, viewer.dealershipId))
+    .orderBy(asc(addedStations.name));
+  return rows.map((row) => ({ id: row.id, station: row.normals as Station, createdAt: row.createdAt }));
 }

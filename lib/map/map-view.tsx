@@ -1,13 +1,16 @@
 'use client';
 
 import 'maplibre-gl/dist/maplibre-gl.css';
+import './map.css';
 import clsx from 'clsx';
-import type { Feature, FeatureCollection, MultiPolygon, Polygon } from 'geojson';
+import type { MultiPolygon, Polygon } from 'geojson';
 import * as maplibre from 'maplibre-gl';
 import { type ReactNode, useEffect, useRef, useState } from 'react';
-import { stateAndCountyLines } from './boundaries';
 import { boundsOf } from './bounds';
-import { MAP_COLORS, paperStyle, type TileLayer } from './style';
+import { startDrawing } from './draw';
+import { addLabels } from './labels';
+import { addLayers, pointFeatures, polygonFeatures } from './layers';
+import { paperStyle, type TileLayer } from './style';
 
 export interface MapPolygon {
   id: string;
@@ -44,102 +47,18 @@ export interface MapViewProps {
   /** The view is fitted to the polygons (or to `fitTo`) when this changes. */
   fitKey?: string;
   fitTo?: (Polygon | MultiPolygon)[];
+  /** Free ground around what is fitted, pixels. */
+  fitPadding?: number;
+  /** While given, clicks draw an outline instead of selecting; it is handed over when closed. */
+  onDrawn?: (outline: Polygon) => void;
   tiles?: TileLayer | null;
   className?: string;
   children?: ReactNode;
 }
 
+const NO_POINTS: MapPoint[] = [];
+
 maplibre.setWorkerUrl('/map/maplibre-gl-worker.mjs');
-
-const EMPTY: FeatureCollection = { type: 'FeatureCollection', features: [] };
-
-function polygonFeatures(polygons: MapPolygon[], selectedId: string | null | undefined): FeatureCollection {
-  return {
-    type: 'FeatureCollection',
-    features: polygons.map(
-      (one): Feature => ({
-        type: 'Feature',
-        geometry: one.geometry,
-        properties: {
-          id: one.id,
-          fill: one.fill ?? MAP_COLORS.field,
-          fillOpacity: one.fillOpacity ?? 1,
-          stroke: one.id === selectedId ? MAP_COLORS.ink : (one.stroke ?? '#8b7f68'),
-          strokeWidth: one.id === selectedId ? 3 : (one.strokeWidth ?? 1.2),
-        },
-      }),
-    ),
-  };
-}
-
-function pointFeatures(points: MapPoint[]): FeatureCollection {
-  return {
-    type: 'FeatureCollection',
-    features: points.map(
-      (one): Feature => ({
-        type: 'Feature',
-        geometry: { type: 'Point', coordinates: [one.longitude, one.latitude] },
-        properties: { id: one.id, color: one.color ?? MAP_COLORS.ink },
-      }),
-    ),
-  };
-}
-
-function addLayers(map: maplibre.Map): void {
-  map.addSource('counties', { type: 'geojson', data: EMPTY });
-  map.addSource('states', { type: 'geojson', data: EMPTY });
-  map.addLayer({ id: 'counties', type: 'line', source: 'counties', paint: { 'line-color': MAP_COLORS.county, 'line-width': 1 } });
-  map.addLayer({ id: 'states', type: 'line', source: 'states', paint: { 'line-color': MAP_COLORS.state, 'line-width': 1.6 } });
-  map.addSource('polygons', { type: 'geojson', data: EMPTY });
-  map.addLayer({
-    id: 'polygon-fill',
-    type: 'fill',
-    source: 'polygons',
-    paint: { 'fill-color': ['get', 'fill'], 'fill-opacity': ['get', 'fillOpacity'] },
-  });
-  map.addLayer({
-    id: 'polygon-line',
-    type: 'line',
-    source: 'polygons',
-    paint: { 'line-color': ['get', 'stroke'], 'line-width': ['get', 'strokeWidth'] },
-  });
-  map.addSource('points', { type: 'geojson', data: EMPTY });
-  map.addLayer({
-    id: 'points',
-    type: 'circle',
-    source: 'points',
-    paint: {
-      'circle-radius': 4,
-      'circle-color': ['get', 'color'],
-      'circle-stroke-color': MAP_COLORS.ink,
-      'circle-stroke-width': 1,
-    },
-  });
-  void stateAndCountyLines().then((lines) => {
-    (map.getSource('counties') as maplibre.GeoJSONSource | undefined)?.setData(lines.counties);
-    (map.getSource('states') as maplibre.GeoJSONSource | undefined)?.setData(lines.states);
-  });
-}
-
-/** Labels are page elements over the map, so that they take the page's fonts and can be read by any program. */
-function label(one: { label?: string; sublabel?: string }): HTMLElement {
-  const element = document.createElement('div');
-  element.className =
-    'pointer-events-none text-center leading-tight text-[13px] text-ink [text-shadow:0_0_3px_#fbf8f0,0_0_3px_#fbf8f0,0_0_6px_#fbf8f0]';
-  element.style.fontFamily = 'var(--font-sans)';
-  const name = document.createElement('div');
-  name.className = 'font-bold';
-  name.style.fontFamily = 'var(--font-display)';
-  name.textContent = one.label ?? '';
-  element.append(name);
-  if (one.sublabel) {
-    const under = document.createElement('div');
-    under.className = 'text-[12px] whitespace-nowrap';
-    under.textContent = one.sublabel;
-    element.append(under);
-  }
-  return element;
-}
 
 /**
  * The one map of the product. The table beside it is the way in for the keyboard and for screen readers; the map says what it
@@ -149,21 +68,25 @@ export function MapView(props: MapViewProps) {
   const {
     ariaLabel,
     polygons,
-    points = [],
+    points = NO_POINTS,
     raster = null,
     selectedId,
     onSelect,
     fitKey = '',
     fitTo,
+    fitPadding = 48,
+    onDrawn,
     tiles = null,
     className,
     children,
   } = props;
   const frame = useRef<HTMLDivElement>(null);
   const mapRef = useRef<maplibre.Map | null>(null);
-  const markers = useRef<maplibre.Marker[]>([]);
   const select = useRef(onSelect);
-  select.current = onSelect;
+  select.current = onDrawn ? undefined : onSelect;
+  const drawn = useRef(onDrawn);
+  drawn.current = onDrawn;
+  const drawing = onDrawn !== undefined;
   const [ready, setReady] = useState(false);
   const [failed, setFailed] = useState(false);
 
@@ -219,29 +142,17 @@ export function MapView(props: MapViewProps) {
     if (!map || !ready) return;
     (map.getSource('polygons') as maplibre.GeoJSONSource).setData(polygonFeatures(polygons, selectedId));
     (map.getSource('points') as maplibre.GeoJSONSource).setData(pointFeatures(points));
-    for (const marker of markers.current) marker.remove();
-    const crowded = polygons.filter((one) => one.label).map((one) => ({ element: label(one), bounds: boundsOf([one.geometry]) }));
-    /** A label wider than its field would lie over the neighbour's: its second line goes first, then all of it. */
-    const thin = () => {
-      for (const { element, bounds } of crowded) {
-        const width = map.project([bounds[2], bounds[1]]).x - map.project([bounds[0], bounds[1]]).x;
-        element.style.visibility = width < 34 ? 'hidden' : '';
-        if (element.children[1]) (element.children[1] as HTMLElement).style.display = width < 92 ? 'none' : '';
-      }
-    };
-    thin();
-    map.on('zoom', thin);
-    markers.current = [
-      ...crowded.map(({ element, bounds: [west, south, east, north] }) =>
-        new maplibre.Marker({ element }).setLngLat([(west + east) / 2, (south + north) / 2]).addTo(map),
-      ),
-      ...points
-        .filter((one) => one.label)
-        .map((one) =>
-          new maplibre.Marker({ element: label(one), offset: [0, -12] }).setLngLat([one.longitude, one.latitude]).addTo(map),
-        ),
-    ];
   }, [ready, polygons, points, selectedId]);
+
+  useEffect(() => {
+    const map = mapRef.current;
+    return map && ready ? addLabels(map, polygons, points) : undefined;
+  }, [ready, polygons, points]);
+
+  useEffect(() => {
+    const map = mapRef.current;
+    return map && ready && drawing ? startDrawing(map, (outline) => drawn.current?.(outline)) : undefined;
+  }, [ready, drawing]);
 
   useEffect(() => {
     const map = mapRef.current;
@@ -277,7 +188,7 @@ export function MapView(props: MapViewProps) {
     const shapes = fitTo ?? polygons.map((one) => one.geometry);
     if (!map || !ready || shapes.length === 0) return;
     const [west, south, east, north] = boundsOf(shapes);
-    if (Number.isFinite(west)) map.fitBounds([west, south, east, north], { padding: 48, animate: false, maxZoom: 16.5 });
+    if (Number.isFinite(west)) map.fitBounds([west, south, east, north], { padding: fitPadding, animate: false, maxZoom: 16.5 });
   }, [ready, fitKey]);
 
   return (

@@ -6,7 +6,7 @@ import { archiveField, copyFacts, keepBoundaries, renameField, saveFacts, undoBo
 import { inspectBoundaries } from '@/features/fields/inspect';
 import { factsOf, factsOfOperation, fieldOf, fieldsOf } from '@/features/fields/queries';
 import { discardUpload, originalOf, readUploadFiles, receiveUpload, uploadOf, uploadsOf } from '@/features/imports/machine';
-import { scoreOperation } from '@/features/placement/changes';
+import { scoreOperation } from '@/features/placement/changes/score';
 import { placementOf, scoredFieldsOf, scoreOf, scoresOf } from '@/features/placement/queries';
 import { NotFoundError } from '@/lib/errors';
 import { aSquare, aStoredField, aStoredVariety, someSoilTests } from '../support/fields';

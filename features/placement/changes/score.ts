@@ -1,6 +1,5 @@
 import 'server-only';
 import { setImmediate } from 'node:timers/promises';
-import { z } from 'zod';
 import { fieldScores } from '@/db/schema';
 import { change } from '@/features/accounts/gate';
 import type { Viewer } from '@/features/accounts/model';
@@ -10,8 +9,7 @@ import { bad, good, NotFoundError, type Outcome } from '@/lib/errors';
 import { rank } from '../engine/rank';
 import { ENGINE_VERSION } from '../engine/version';
 import { engineInputs, gatherInputs, hashOfInputs, hashOfShared, supplyForRanking } from '../inputs';
-
-const scoreSchema = z.object({ operationId: z.string().min(1), season: z.number().int() });
+import { scoreSchema } from '../schemas';
 
 /**
  * Scores every field of an operation against the published line-up. The computing is done before the transaction, field by
