@@ -4,6 +4,7 @@ import { database, type Transaction } from '@/db/client';
 import {
   dealerships,
   farms,
+  fieldFacts,
   fieldScores,
   fields,
   operations,
@@ -18,6 +19,7 @@ import {
 import type { Ranking } from '@/features/placement/engine/model';
 import { NotFoundError } from '@/lib/errors';
 import { type Choice, type PlanEvent, type PlanLine, type PlanLot, type PlanView, totalsOf, type VarietySupply } from './model';
+import { deviates } from './reassess';
 import { HOLDING_STATES, type PlanState } from './states';
 import { type Held, heldByLot, supplyWordFor } from './supply';
 
@@ -82,11 +84,13 @@ export async function readPlan(
     )
     .orderBy(asc(farms.name), asc(fields.name));
   const scores = await from
-    .select({ fieldId: fieldScores.fieldId, ranking: fieldScores.ranking })
+    .select({ fieldId: fieldScores.fieldId, ranking: fieldScores.ranking, facts: fieldFacts })
     .from(fieldScores)
     .innerJoin(fields, eq(fields.id, fieldScores.fieldId))
+    .leftJoin(fieldFacts, and(eq(fieldFacts.fieldId, fields.id), eq(fieldFacts.season, season)))
     .where(and(eq(fields.operationId, operationId), eq(fieldScores.season, season)));
   const rankings = new Map(scores.map((score) => [score.fieldId, score.ranking]));
+  const factsBy = new Map(scores.map((score) => [score.fieldId, score.facts]));
   const lineUp = await from
     .select()
     .from(varieties)
@@ -119,13 +123,16 @@ export async function readPlan(
 
   const lines: PlanLine[] = [];
   for (const field of fieldRows) {
-    const own = rows.filter((row) => row.fieldId === field.id).sort((a, b) => a.partName.localeCompare(b.partName));
+    const parts = rows.filter((row) => row.fieldId === field.id).sort((a, b) => a.partName.localeCompare(b.partName));
     const ranking = rankings.get(field.id) ?? null;
-    for (const row of own.length > 0 ? own : [null]) {
+    for (const row of parts.length > 0 ? parts : [null]) {
       const variety = row?.varietyId ? (varietyById.get(row.varietyId) ?? null) : null;
       const lot = row?.seedLotId ? (lotById.get(row.seedLotId) ?? null) : null;
       const pick = variety ? (ranking?.picks.find((one) => one.varietyId === variety.id) ?? null) : null;
-      const assessment = row?.varietyId ? (frozen ? row.assessment : (row.assessment ?? pick)) : null;
+      const own = row?.varietyId ? row.assessment : null;
+      // A draft shows today's score, unless the row is planted otherwise than the score was reckoned for.
+      const otherwise = row !== null && deviates(row, factsBy.get(field.id) ?? null);
+      const assessment = !row?.varietyId || frozen ? own : otherwise ? (own ?? pick) : (pick ?? own);
       lines.push({
         id: row?.id ?? null,
         fieldId: field.id,
@@ -147,7 +154,7 @@ export async function readPlan(
         locked: row?.locked ?? false,
         note: row?.note ?? null,
         assessment: assessment ?? null,
-        runnerUp: variety && assessment ? runnerUpOf(ranking, variety.id, assessment.expected) : null,
+        runnerUp: variety && assessment ? runnerUpOf(ranking, variety.id, (pick ?? assessment).expected) : null,
         caution: cautionOf(ranking, row?.varietyId ?? null),
         plantedOn: row ? (plantedOn.get(row.id) ?? null) : null,
       });

@@ -7,6 +7,7 @@ import { bad, good, NotFoundError, type Outcome } from '@/lib/errors';
 import { formatNumber } from '@/lib/format';
 import { createId } from '@/lib/ids';
 import type { FieldGround, RowRecord } from './plan-record';
+import { type AssessAt, deviates } from './reassess';
 import type { SetRow } from './schemas';
 import { exactUnits, suggestedSeedsPerAcre } from './seed-math';
 import type { SupplyBook } from './supply-book';
@@ -37,6 +38,7 @@ export async function valuesAfter(
   before: RowValues | null,
   set: Partial<SetRow['set']>,
   book: SupplyBook,
+  assessAt: AssessAt | null = null,
 ): Promise<Outcome<RowValues>> {
   const after: RowValues = { ...(before ?? EMPTY_ROW), ...set };
   if (before === null && set.rowWidthInches === undefined) after.rowWidthInches = field.facts?.rowWidthInches ?? null;
@@ -74,6 +76,10 @@ export async function valuesAfter(
 
   after.populationSeedsPerAcre = rateFor(lot);
   after.assessment = field.ranking?.picks.find((pick) => pick.varietyId === variety.id) ?? null;
+  if (after.assessment && assessAt && deviates(after, field.facts)) {
+    const { rowWidthInches, populationSeedsPerAcre } = after;
+    after.assessment = assessAt(variety.id, { rowWidthInches, populationSeedsPerAcre }) ?? after.assessment;
+  }
   return good(after);
 }
 

@@ -1,7 +1,7 @@
 import { and, eq } from 'drizzle-orm';
 import { describe, expect, test } from 'vitest';
 import { database } from '@/db/client';
-import { outboxMails, planEvents, planRows, plans, seedLots } from '@/db/schema';
+import { fieldFacts, outboxMails, planEvents, planRows, plans, seedLots } from '@/db/schema';
 import { fillFromPicks, removeRow, setRow } from '@/features/plans/changes/rows';
 import { agree, askChange, propose, reopen, withdraw } from '@/features/plans/changes/steps';
 import { planOf, seasonOf } from '@/features/plans/queries';
@@ -101,6 +101,28 @@ describe('a plan from draft to agreed', () => {
     expect(words(await setRow(world.rep, { ...base, set: { populationSeedsPerAcre: 14 } }))).toContain('40,000 to 300,000');
     expect(words(await setRow(world.rep, { ...base, set: { rowWidthInches: 400 } }))).toContain('4 to 60 in');
     expect(words(await setRow(world.rep, { ...base, set: {} }))).toContain('Nothing to change');
+  });
+});
+
+describe('a row planted otherwise than the field’s facts', () => {
+  test('is assessed anew by the engine at its own row width, and keeps that when the plan is proposed', async () => {
+    const world = await aPlanWorld();
+    const { a } = world.operations;
+    await database().insert(fieldFacts).values({ fieldId: world.fields.home, season: SEASON, rowWidthInches: 30 });
+    await put(world, a, world.fields.home, world.varieties.early.id);
+    const expectedOf = async () =>
+      (await planOf(world.rep, a, SEASON)).lines.find((line) => line.fieldId === world.fields.home)?.assessment;
+    expect((await expectedOf())?.expected).toBe(61.2);
+    const base = { ...key(a), fieldId: world.fields.home };
+    expect(await setRow(world.rep, { ...base, revision: 1, set: { rowWidthInches: 7.5 } })).toMatchObject({ ok: true });
+    const narrow = await expectedOf();
+    expect(narrow?.expected).not.toBe(61.2);
+    expect(narrow?.ledger.length).toBeGreaterThan(0);
+    await propose(world.rep, { ...key(a), revision: 2 });
+    expect((await expectedOf())?.expected).toBe(narrow?.expected);
+    await withdraw(world.rep, key(a));
+    expect(await setRow(world.rep, { ...base, revision: 4, set: { rowWidthInches: 30 } })).toMatchObject({ ok: true });
+    expect((await expectedOf())?.expected).toBe(61.2);
   });
 });
 

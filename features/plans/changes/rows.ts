@@ -15,6 +15,7 @@ import {
   rowsOfPlan,
   stepProblem,
 } from '../plan-record';
+import { assessorOf } from '../reassess';
 import { EMPTY_ROW, valuesAfter, wordsOfChange, writeRow } from '../row-values';
 import { planKeySchema, proposalRowsSchema, removeRowSchema, setRowSchema } from '../schemas';
 import { openSupplyBook } from '../supply-book';
@@ -26,7 +27,9 @@ export function putOnPlan(viewer: Viewer, input: PlanKey & { fieldId: string; va
 }
 
 /** Sets what is named of a row: variety, lot, seeds per acre, row width, lock, note. A conflict tells what changed meanwhile. */
-export function setRow(viewer: Viewer, input: unknown): Promise<Outcome<{ revision: number }>> {
+export async function setRow(viewer: Viewer, input: unknown): Promise<Outcome<{ revision: number }>> {
+  const known = setRowSchema.safeParse(input);
+  const assessAt = known.success ? await assessorOf(viewer, known.data.fieldId, known.data.season) : null;
   return change(viewer, {
     right: ['plan', 'change'],
     schema: setRowSchema,
@@ -45,7 +48,7 @@ export function setRow(viewer: Viewer, input: unknown): Promise<Outcome<{ revisi
       if (!before && wanted.partName !== '') throw new NotFoundError('No such part of the field on this plan.');
       const others = rows.filter((row) => row !== before);
       const book = await openSupplyBook(transaction, viewer, wanted.season, plan.id, others);
-      const outcome = await valuesAfter(transaction, viewer, wanted.season, ground, before ?? null, wanted.set, book);
+      const outcome = await valuesAfter(transaction, viewer, wanted.season, ground, before ?? null, wanted.set, book, assessAt);
       if (!outcome.ok) return outcome;
       const rowId = await writeRow(transaction, plan.id, ground, before ?? null, outcome.value);
       const words = await wordsOfChange(transaction, before ?? EMPTY_ROW, outcome.value);

@@ -22,6 +22,7 @@ import {
   stepProblem,
 } from '../plan-record';
 import { readPlan } from '../read';
+import { deviates } from '../reassess';
 import { agreeSchema, askChangeSchema, commentSchema, proposeSchema, reopenSchema, withdrawSchema } from '../schemas';
 import { shortages } from '../supply';
 
@@ -217,7 +218,10 @@ async function refreshRows(transaction: Transaction, plan: PlanRecord, key: Plan
     const pick = field.ranking?.picks.find((one) => one.varietyId === row.varietyId) ?? null;
     await transaction
       .update(planRows)
-      .set({ areaAcres: row.partGeometry ? row.areaAcres : field.areaAcres, assessment: pick ?? row.assessment })
+      .set({
+        areaAcres: row.partGeometry ? row.areaAcres : field.areaAcres,
+        assessment: deviates(row, field.facts) ? (row.assessment ?? pick) : (pick ?? row.assessment),
+      })
       .where(eq(planRows.id, row.id));
   }
 }
