@@ -20,6 +20,10 @@ const COMMANDS: Record<string, { summary: string; load(): Promise<Command> }> = 
     summary: 'a surface from points by kriging or inverse distance',
     load: async () => (await import('./surface')).surfaceCommand,
   },
+  survey: {
+    summary: 'map units of a soil survey area in every field',
+    load: async () => (await import('./survey')).surveyCommand,
+  },
 };
 
 export interface Result {
