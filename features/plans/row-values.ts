@@ -115,7 +115,7 @@ export async function writeRow(
   return id;
 }
 
-/** What changed of a row, before → after, in words. */
+/** What changed of a row, before → after, in words; empty when nothing did. */
 export async function wordsOfChange(transaction: Transaction, before: RowValues, after: RowValues): Promise<string[]> {
   const codeOf = async (id: string | null) =>
     id === null
@@ -138,7 +138,7 @@ export async function wordsOfChange(transaction: Transaction, before: RowValues,
   }
   if (before.locked !== after.locked) words.push(after.locked ? 'locked' : 'unlocked');
   if ((before.note ?? '') !== (after.note ?? '')) words.push(`note “${after.note ?? ''}”`);
-  return words.length > 0 ? words : ['nothing new'];
+  return words;
 }
 
 function inches(width: number | null): string {

@@ -59,6 +59,15 @@ describe('the PDF', () => {
     expect(all).not.toMatch(/\$|price/i);
   });
 
+  test.skipIf(!has('pdftotext'))('for the cab has what the crew needs in large type, and neither yield nor price', async () => {
+    const text = execFileSync('pdftotext', ['-layout', await written('cab', 'cab.pdf'), '-'], { encoding: 'utf8' });
+    const flat = text.replace(/\s+/g, ' ');
+    for (const words of ['Home 80', '140,000', 'CR 24-71', '4.02', 'Bags to carry', 'not for food, feed or oil']) {
+      expect(flat).toContain(words);
+    }
+    expect(flat).not.toMatch(/expected|\$|58\.2/);
+  });
+
   test.skipIf(!has('pdffonts'))('carries its own fonts in their right weights', async () => {
     const fonts = execFileSync('pdffonts', [await written('pdf', 'pdf')], { encoding: 'utf8' });
     expect(fonts).toMatch(/PublicSans-Regular/);

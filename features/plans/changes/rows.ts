@@ -50,8 +50,10 @@ export async function setRow(viewer: Viewer, input: unknown): Promise<Outcome<{ 
       const book = await openSupplyBook(transaction, viewer, wanted.season, plan.id, others);
       const outcome = await valuesAfter(transaction, viewer, wanted.season, ground, before ?? null, wanted.set, book, assessAt);
       if (!outcome.ok) return outcome;
-      const rowId = await writeRow(transaction, plan.id, ground, before ?? null, outcome.value);
       const words = await wordsOfChange(transaction, before ?? EMPTY_ROW, outcome.value);
+      // Leaving a cell as it was is no change: no revision, nothing in the history.
+      if (before && words.length === 0) return good({ revision: plan.revision });
+      const rowId = await writeRow(transaction, plan.id, ground, before ?? null, outcome.value);
       const revision = await bumpPlan(transaction, plan, { state: 'draft' });
       await addEvent(transaction, viewer, plan.id, {
         verb: 'row set',

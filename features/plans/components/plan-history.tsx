@@ -3,6 +3,15 @@ import type { FormAction } from '@/lib/ui/action-form';
 import type { PlanEvent, PlanLine } from '../model';
 import { CommentForm } from './comment-form';
 
+/** How an event is said where its name is not the word for it. */
+const VERBS: Record<string, string> = {
+  'row set': 'set',
+  'row removed': 'took off',
+  comment: 'wrote',
+  'crew link made': 'made a crew link',
+  'crew link revoked': 'revoked a crew link',
+};
+
 /** What happened to the plan, newest first, and a place to write a comment. */
 export function PlanHistory({
   events,
@@ -32,7 +41,7 @@ export function PlanHistory({
             <li key={event.id} className="grid gap-x-4 border-b border-line py-2 sm:grid-cols-[11rem_1fr]">
               <span className="text-mute">{formatMoment(event.at)}</span>
               <span>
-                <strong>{event.personName ?? 'The crew'}</strong> {event.verb}
+                <strong>{event.personName ?? 'The crew'}</strong> {VERBS[event.verb] ?? event.verb}
                 {event.fieldName ? `: ${event.fieldName}` : ''}
                 {event.words.length > 0 ? <span className="text-mute"> – {event.words.join(', ')}</span> : null}
                 {event.word ? <span className="mt-1 block border-l-2 border-bloom pl-3">“{event.word}”</span> : null}

@@ -101,7 +101,7 @@ export function PlanCards({ view, dealershipSide, edit }: Props) {
         return (
           <li key={`${line.fieldId} ${line.partName}`} className="border border-line bg-paper p-4">
             <div className="flex items-baseline justify-between gap-3">
-              <h3 className="text-lg">{lineName(line)}</h3>
+              <h2 className="text-lg">{lineName(line)}</h2>
               <span className="text-mute whitespace-nowrap">{byId.get('acres')?.text(line, figures)} ac</span>
             </div>
             <div className="mt-2 flex items-center justify-between gap-3">

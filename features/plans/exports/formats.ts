@@ -1,6 +1,7 @@
 /** The forms a plan leaves Hilum in: one list for the menu, the route and the tests. Pure. */
 export const EXPORT_FORMATS = [
-  { id: 'pdf', label: 'PDF, for office and cab', contentType: 'application/pdf', ending: 'pdf' },
+  { id: 'pdf', label: 'Plan (PDF)', contentType: 'application/pdf', ending: 'pdf' },
+  { id: 'cab', label: 'Planting sheet for the cab (PDF)', contentType: 'application/pdf', ending: 'planting-sheet.pdf' },
   {
     id: 'xlsx',
     label: 'Workbook (XLSX)',

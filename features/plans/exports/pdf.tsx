@@ -1,6 +1,5 @@
 import 'server-only';
-import { join } from 'node:path';
-import { Document, Font, Page, Path, renderToBuffer, StyleSheet, Svg, Text, View } from '@react-pdf/renderer';
+import { Document, Page, Path, renderToBuffer, StyleSheet, Svg, Text, View } from '@react-pdf/renderer';
 import { formatDate } from '@/lib/dates';
 import { formatAcres, formatBand, formatBushels, formatNumber, formatTenth } from '@/lib/format';
 import { CAUTIONS } from '@/lib/ui/cautions';
@@ -8,24 +7,9 @@ import { columnsFor, type PlanColumn } from '../columns';
 import { figuresOf, lineName, type PlanLine, type PlanView, totalsOf } from '../model';
 import { outlineOf } from './outline';
 import { PdfLedger } from './pdf-ledger';
+import { INK, LINE, MUTE, registerFonts } from './pdf-look';
 
-const FONTS = join(process.cwd(), 'public', 'fonts');
-// Static weights (a variable file comes out in its default weight) as WOFF (glyphs of a WOFF2 file cannot be subset).
-Font.register({
-  family: 'Public Sans',
-  fonts: [
-    { src: join(FONTS, 'public-sans-latin-400-normal.woff'), fontWeight: 400 },
-    { src: join(FONTS, 'public-sans-latin-600-normal.woff'), fontWeight: 600 },
-    { src: join(FONTS, 'public-sans-latin-700-normal.woff'), fontWeight: 700 },
-  ],
-});
-Font.register({ family: 'Bricolage', src: join(FONTS, 'bricolage-grotesque-latin-700-normal.woff'), fontWeight: 700 });
-// A variety's code or a lot's number must never be broken.
-Font.registerHyphenationCallback((word) => [word]);
-
-const INK = '#221d17';
-const MUTE = '#6a6055';
-const LINE = '#d9cfb9';
+registerFonts();
 
 const styles = StyleSheet.create({
   page: { fontFamily: 'Public Sans', fontSize: 9, color: INK, paddingTop: 36, paddingBottom: 64, paddingHorizontal: 36 },

@@ -1,5 +1,6 @@
 import 'server-only';
 import type { PlanView } from '../model';
+import { cabPdf } from './cab-pdf';
 import { planCalendar } from './calendar';
 import { planCsv } from './csv';
 import type { ExportFormat } from './formats';
@@ -22,6 +23,8 @@ export async function writeExport(format: ExportFormat, view: PlanView, options:
   switch (format) {
     case 'pdf':
       return planPdf(view, options.madeOn);
+    case 'cab':
+      return cabPdf(view, options.madeOn);
     case 'xlsx':
       return planXlsx(view, options.dealershipSide);
     case 'csv':

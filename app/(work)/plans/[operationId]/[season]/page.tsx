@@ -1,6 +1,9 @@
+import Link from 'next/link';
 import { notFound } from 'next/navigation';
+import { cache } from 'react';
 import { may } from '@/features/accounts/rights';
 import { requireViewer } from '@/features/accounts/viewer';
+import { scoresOf } from '@/features/placement/queries';
 import {
   agreePlan,
   askPlanChange,
@@ -25,7 +28,7 @@ import { StateTag } from '@/features/plans/components/state-tag';
 import { planOf, sheetLinksOf } from '@/features/plans/queries';
 import { mayStep } from '@/features/plans/states';
 import { formatMoment } from '@/lib/dates';
-import { NotFoundError } from '@/lib/errors';
+import { found } from '@/lib/found';
 import { LinkButton } from '@/lib/ui/button';
 import { CAUTIONS } from '@/lib/ui/cautions';
 import { Caution, EmptyState, Notice, Page, PageHeader } from '@/lib/ui/page';
@@ -34,30 +37,30 @@ interface Props {
   params: Promise<{ operationId: string; season: string }>;
 }
 
-async function planFor({ params }: Props) {
-  const { operationId, season } = await params;
+/** Read once a request, for the title and the page. */
+const planFor = cache(async (operationId: string, season: string) => {
   const viewer = await requireViewer();
   if (!/^20\d\d$/.test(season)) notFound();
-  try {
-    return { viewer, view: await planOf(viewer, operationId, Number(season)) };
-  } catch (error) {
-    if (error instanceof NotFoundError) notFound();
-    throw error;
-  }
-}
+  return { viewer, view: await found(planOf(viewer, operationId, Number(season))) };
+});
 
-export async function generateMetadata(props: Props) {
-  const { view } = await planFor(props);
+export async function generateMetadata({ params }: Props) {
+  const { operationId, season } = await params;
+  const { view } = await planFor(operationId, season);
   return { title: `${view.season} plan of ${view.operationName}` };
 }
 
 /** The plan of an operation: a row a field, from draft to agreed. */
-export default async function PlanPage(props: Props) {
-  const { viewer, view } = await planFor(props);
+export default async function PlanPage({ params }: Props) {
+  const asked = await params;
+  const { viewer, view } = await planFor(asked.operationId, asked.season);
   const { operationId, season } = view;
   const dealershipSide = may(viewer, 'supply', 'read');
   const placed = view.lines.filter((line) => line.variety).length;
   const editable = may(viewer, 'plan', 'change') && mayStep('edit', view.state, viewer.role);
+  const scores = editable ? await scoresOf(viewer, operationId, season) : new Map();
+  const stale = [...scores.values()].filter((score) => score.stale).length;
+  const unscored = view.lines.filter((line) => line.caution === 'not scored yet').length;
   const shared = ['proposed', 'agreed', 'planted', 'harvested'].includes(view.state);
   return (
     <Page>
@@ -109,6 +112,19 @@ export default async function PlanPage(props: Props) {
         ) : null}
         {viewer.role === 'grower' && view.state === 'draft' && placed > 0 ? (
           <Notice>Your rep is still working on this plan. You will have mail when it is proposed.</Notice>
+        ) : null}
+        {editable && view.lines.length > 0 && (stale > 0 || unscored > 0) ? (
+          <Notice kind="attention">
+            {[
+              ...(stale > 0 ? [`${stale} ${stale === 1 ? 'score is' : 'scores are'} stale`] : []),
+              ...(unscored > 0 ? [`${unscored} ${unscored === 1 ? 'field is' : 'fields are'} not scored`] : []),
+            ].join(', ')}
+            .{' '}
+            <Link href={`/fields?operation=${operationId}`} className="underline">
+              Score them on the fields page
+            </Link>{' '}
+            before proposing.
+          </Notice>
         ) : null}
         {view.lines.length === 0 ? (
           <EmptyState
