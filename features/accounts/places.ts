@@ -27,6 +27,9 @@ export function startOf(role: Role): string {
 /** Pages of the dealership's and one's own settings that a role may open, in order. */
 export function settingsOf(role: Role, showOutbox: boolean): { label: string; href: string }[] {
   const ofManager = [
+    { label: 'Maturity zones', href: '/settings/zones' },
+    { label: 'Placement rules', href: '/settings/rules' },
+    { label: 'Weather stations', href: '/settings/stations' },
     { label: 'Audit trail', href: '/settings/audit' },
     ...(showOutbox ? [{ label: 'Outbox', href: '/outbox' }] : []),
   ];
