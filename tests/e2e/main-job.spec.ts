@@ -83,11 +83,12 @@ test('a dealership does its main job, end to end, on real input', async ({ brows
   await test.step('the manager invites a rep, and the rep opens the account', async () => {
     await signIn(manager, MANAGER);
     await manager.goto('/settings/people');
-    await manager.getByLabel('Name').first().fill(REP.name);
-    await manager.getByLabel('E-mail').first().fill(REP.email);
-    await manager.getByLabel('Role').first().selectOption('rep');
-    await manager.getByRole('button', { name: 'Send the invitation' }).click();
-    await expect(manager.getByText(/invitation is on its way|Invited/i).first()).toBeVisible();
+    const invitation = manager.locator('form').filter({ has: manager.getByRole('button', { name: 'Send the invitation' }) });
+    await invitation.getByLabel('Role').selectOption('rep');
+    await invitation.getByLabel('Name').fill(REP.name);
+    await invitation.getByLabel('E-mail').fill(REP.email);
+    await invitation.getByRole('button', { name: 'Send the invitation' }).click();
+    await expect(manager.getByText(/invitation (is on its way|stands)|kept in the outbox|outbox/i).first()).toBeVisible();
     await openAccount(rep, await invitationLink(manager, REP.email), REP);
   });
 
@@ -113,10 +114,11 @@ test('a dealership does its main job, end to end, on real input', async ({ brows
     await expect(rep.getByText('Creekside Farm').first()).toBeVisible();
     if (!/\/growers\/.+/.test(rep.url())) await rep.getByRole('link', { name: 'Creekside Farm' }).first().click();
     await expect(rep.getByRole('heading', { level: 1, name: 'Creekside Farm' })).toBeVisible();
-    await rep.getByLabel('Name', { exact: true }).last().fill(GROWER.name);
-    await rep.getByLabel('E-mail').last().fill(GROWER.email);
-    await rep.getByRole('button', { name: 'Send the invitation' }).click();
-    await expect(rep.getByText(GROWER.email).first()).toBeVisible();
+    const invitation = rep.locator('form').filter({ has: rep.getByRole('button', { name: 'Send the invitation' }) });
+    await invitation.getByLabel('Name').fill(GROWER.name);
+    await invitation.getByLabel('E-mail').fill(GROWER.email);
+    await invitation.getByRole('button', { name: 'Send the invitation' }).click();
+    await expect(rep.getByText(/invitation (is on its way|stands)|kept in the outbox|outbox/i).first()).toBeVisible();
     await openAccount(grower, await invitationLink(manager, GROWER.email), GROWER);
   });
 

@@ -6,7 +6,7 @@ test('the crew opens the sheet, loses signal, marks a field planted, and the mar
   baseURL,
 }) => {
   const office = await browser.newContext({ baseURL });
-  await signInAs(office, baseURL as string, 'rep');
+  await signInAs(office, baseURL as string, 'manager');
   const plan = await office.newPage();
   await plan.goto('/plans');
   await plan.getByRole('row').filter({ hasText: 'agreed' }).getByRole('link').first().click();

@@ -7,6 +7,7 @@ import { ScoreButton } from '@/features/placement/components/score-button';
 import { scoredFieldsOf } from '@/features/placement/queries';
 import { fieldLine } from '@/features/placement/view';
 import { formatAcres } from '@/lib/format';
+import { found } from '@/lib/found';
 import { configuredTiles } from '@/lib/map/tiles';
 import { LinkButton } from '@/lib/ui/button';
 import { CAUTIONS } from '@/lib/ui/cautions';
@@ -17,7 +18,7 @@ export const metadata: Metadata = { title: 'Fields' };
 
 export default async function FieldsPage({ searchParams }: { searchParams: Promise<{ operation?: string }> }) {
   const viewer = await requireViewer();
-  const operation = await chosenOperation(viewer, (await searchParams).operation);
+  const operation = await found(chosenOperation(viewer, (await searchParams).operation));
   if (!operation) {
     return (
       <Page narrow>

@@ -10,6 +10,7 @@ import { placementOf, scoredFieldsOf } from '@/features/placement/queries';
 import { fieldLine, layerOf } from '@/features/placement/view';
 import { putPickOnPlan } from '@/features/plans/actions';
 import { planOf } from '@/features/plans/queries';
+import { found } from '@/lib/found';
 import { configuredTiles } from '@/lib/map/tiles';
 
 interface FieldPageProps {
@@ -19,14 +20,14 @@ interface FieldPageProps {
 
 export async function generateMetadata({ params }: FieldPageProps): Promise<Metadata> {
   const viewer = await requireViewer();
-  return { title: (await fieldOf(viewer, (await params).fieldId)).name };
+  return { title: (await found(fieldOf(viewer, (await params).fieldId))).name };
 }
 
 export default async function FieldPage({ params, searchParams }: FieldPageProps) {
   const viewer = await requireViewer();
   const { fieldId } = await params;
   const { layer } = await searchParams;
-  const placement = await placementOf(viewer, fieldId, viewer.season);
+  const placement = await found(placementOf(viewer, fieldId, viewer.season));
   const { field, facts } = placement.inputs;
   const [operation, scored, plan] = await Promise.all([
     operationOf(viewer, field.operationId),

@@ -7,13 +7,14 @@ import { OFFERED_CRS } from '@/features/fields/readers/crs';
 import { chosenOperation, farmsOf } from '@/features/growers/queries';
 import { ImportHistory } from '@/features/imports/components/import-history';
 import { uploadsOf } from '@/features/imports/machine';
+import { found } from '@/lib/found';
 import { EmptyState, Page, PageHeader } from '@/lib/ui/page';
 
 export const metadata: Metadata = { title: 'Bring in boundaries' };
 
 export default async function ImportBoundariesPage({ searchParams }: { searchParams: Promise<{ operation?: string }> }) {
   const viewer = await requireViewer();
-  const operation = await chosenOperation(viewer, (await searchParams).operation);
+  const operation = await found(chosenOperation(viewer, (await searchParams).operation));
   if (!operation) {
     return (
       <Page narrow>

@@ -7,6 +7,7 @@ import { SeedTag } from '@/features/line-up/components/seed-tag';
 import { VarietyForm } from '@/features/line-up/components/variety-form';
 import { VarietySteps } from '@/features/line-up/components/variety-steps';
 import { lotsOf, varietyOf } from '@/features/line-up/queries';
+import { found } from '@/lib/found';
 import { CAUTIONS } from '@/lib/ui/cautions';
 import { Caution, Page, PageHeader, Tag } from '@/lib/ui/page';
 
@@ -15,7 +16,7 @@ export const metadata: Metadata = { title: 'Variety' };
 export default async function VarietyPage({ params }: { params: Promise<{ varietyId: string }> }) {
   const viewer = await requireViewer();
   const { varietyId } = await params;
-  const [variety, lots] = await Promise.all([varietyOf(viewer, varietyId), lotsOf(viewer, varietyId)]);
+  const [variety, lots] = await found(Promise.all([varietyOf(viewer, varietyId), lotsOf(viewer, varietyId)]));
   const keeps = may(viewer, 'variety', 'change');
   return (
     <Page>

@@ -6,6 +6,7 @@ import { WhyNotPanel } from '@/features/placement/components/why-not-panel';
 import { rank } from '@/features/placement/engine/rank';
 import { placementOf } from '@/features/placement/queries';
 import { comparedIds } from '@/features/placement/view';
+import { found } from '@/lib/found';
 import { LinkButton } from '@/lib/ui/button';
 import { CAUTIONS } from '@/lib/ui/cautions';
 import { Caution, EmptyState, Page, PageHeader } from '@/lib/ui/page';
@@ -21,7 +22,7 @@ export default async function ComparePage({
 }) {
   const viewer = await requireViewer();
   const { fieldId } = await params;
-  const placement = await placementOf(viewer, fieldId, viewer.season);
+  const placement = await found(placementOf(viewer, fieldId, viewer.season));
   const { engine, varieties } = placement;
   const { field } = placement.inputs;
   // Today's inputs, so that both questions below are answered for the field as it stands now.

@@ -7,13 +7,14 @@ import { FieldNameForm } from '@/features/fields/components/field-name-form';
 import { factsOf, fieldOf, fieldsOf } from '@/features/fields/queries';
 import { farmsOf, operationOf } from '@/features/growers/queries';
 import { formatAcres } from '@/lib/format';
+import { found } from '@/lib/found';
 import { Page, PageHeader } from '@/lib/ui/page';
 
 export const metadata: Metadata = { title: 'Facts of a field' };
 
 export default async function FactsPage({ params }: { params: Promise<{ fieldId: string }> }) {
   const viewer = await requireViewer();
-  const field = await fieldOf(viewer, (await params).fieldId);
+  const field = await found(fieldOf(viewer, (await params).fieldId));
   const [facts, all, operation, farms] = await Promise.all([
     factsOf(viewer, field.id, viewer.season),
     fieldsOf(viewer, field.operationId),
