@@ -1,11 +1,19 @@
 import { sql } from 'drizzle-orm';
-import { index, integer, primaryKey, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
+import { customType, index, integer, primaryKey, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import type { MultiPolygon, Polygon } from 'geojson';
 import type { Ranking } from '@/features/placement/engine/model';
+import { packRanking, unpackRanking } from '../packed-ranking';
 import { dealerships } from './accounts';
 import { fields } from './fields';
 
 const now = sql`(unixepoch() * 1000)`;
+
+/** A ranking as packed JSON text; everything that reads or writes it sees the plain ranking. */
+const storedRanking = customType<{ data: Ranking; driverData: string }>({
+  dataType: () => 'text',
+  toDriver: (ranking) => JSON.stringify(packRanking(ranking)),
+  fromDriver: (text) => unpackRanking(JSON.parse(text)),
+});
 
 /** The stored answer for one field and season, with what it was computed from. */
 export const fieldScores = sqliteTable(
@@ -18,7 +26,7 @@ export const fieldScores = sqliteTable(
     engineVersion: text('engine_version').notNull(),
     /** SHA-256 of everything the engine was given; another hash today means the score is stale. */
     inputsHash: text('inputs_hash').notNull(),
-    ranking: text('ranking', { mode: 'json' }).$type<Ranking>().notNull(),
+    ranking: storedRanking('ranking').notNull(),
     scoredAt: integer('scored_at').notNull().default(now),
     scoredByPersonId: text('scored_by_person_id'),
   },

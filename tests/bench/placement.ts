@@ -1,4 +1,5 @@
 import type { Polygon } from 'geojson';
+import { packRanking } from '@/db/packed-ranking';
 import { UNKNOWN_FACTS } from '@/features/fields/model';
 import { climateForPlace } from '@/features/placement/climate/place';
 import { seasonLine } from '@/features/placement/climate/season-line';
@@ -144,7 +145,7 @@ export function placementFigures(): Figure[] {
   const start = performance.now();
   for (let i = 0; i < FIELDS; i++) {
     const one = profileAt(i);
-    bytes += JSON.stringify(rank(one, varieties, seasonOf(one), RULES)).length;
+    bytes += JSON.stringify(packRanking(rank(one, varieties, seasonOf(one), RULES))).length;
     if (i % 100 === 0) peak = Math.max(peak, process.memoryUsage().heapUsed);
   }
   const stored = (performance.now() - start) / 1000;
