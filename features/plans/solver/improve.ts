@@ -1,11 +1,13 @@
 /**
  * Improves a plan of whole fields by seeded annealing: fields move to another variety or change places, always within
  * every limit. Integer programs of many full bins are where branch and bound is slow to find good plans and this is quick;
- * how good the result is, is proven elsewhere, by a bound. Same input, same seed, same answer.
+ * how good the result is, is proven elsewhere, by a bound. Same input and seed, same answer, unless time cuts it short.
  */
 import type { PlanProblem } from './problem';
 import type { Pair } from './program';
 
+/** Moves tried for each field: more finds little. */
+const MOVES_PER_FIELD = 60_000;
 /** Moves tried between two looks at the clock. */
 const BATCH = 20_000;
 
@@ -79,6 +81,7 @@ export function improve(
   const pick = <T>(list: readonly T[]): T => list[Math.floor(random() * list.length)] as T;
   const now = options.now ?? (() => performance.now());
   const begun = now();
+  let moves = 0;
   const typical = objective / Math.max(1, fieldCount);
   let best = Int32Array.from(assignment);
   let bestObjective = objective;
@@ -126,8 +129,10 @@ export function improve(
   };
 
   for (;;) {
-    const portion = (now() - begun) / 1000 / options.seconds;
+    // By moves, so that a machine's load does not change the answer; by the clock only when there are more than time allows.
+    const portion = Math.max(moves / (MOVES_PER_FIELD * fieldCount), (now() - begun) / 1000 / options.seconds);
     if (portion >= 1) break;
+    moves += BATCH;
     const heat = typical * 0.02 * 0.0005 ** portion;
     for (let i = 0; i < BATCH; i++) {
       if (choosy && random() < 0.002) {

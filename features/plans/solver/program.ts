@@ -59,9 +59,10 @@ export function openPairs(problem: PlanProblem): Pair[] {
 /**
  * x(pair): share of the field in the variety, 0..1 (0 or 1 when nothing is split); y(pair): is it there at all;
  * o(variety): is it opened. Maximise Σ acres × value × x. Supply and share rows carry o, which keeps the relaxation tight.
+ * `linked: false` leaves out the rows that tie each pair to its opening one by one, for quick relaxations.
  * `elastic`: limits give way at a cost in proportion, and the smallest giving way is looked for instead.
  */
-export function programOf(problem: PlanProblem, pairs: readonly Pair[], elastic = false): Program {
+export function programOf(problem: PlanProblem, pairs: readonly Pair[], elastic = false, linked = true): Program {
   const split = problem.splitMinFraction < 1;
   const count = problem.maxVarieties ?? problem.varieties.length;
   const opens = problem.minAcresPerVariety > 0 || count < problem.varieties.length;
@@ -140,7 +141,7 @@ export function programOf(problem: PlanProblem, pairs: readonly Pair[], elastic 
         Number.POSITIVE_INFINITY,
       );
     }
-    if (opens)
+    if (opens && linked)
       row(
         [
           [there(i), 1],

@@ -55,15 +55,20 @@ export async function solvePlan(problem: PlanProblem, options: SolveOptions = {}
     if (relaxed.infeasible) return infeasible(smallestRelaxation(highs, problem, pairs), gone());
     bound = relaxed.bound;
     onProgress();
-    const plan = annealed(problem, whole, relaxed, left() * 0.5, onProgress);
-    if (plan) take(whole, plan);
-    if (wide() && left() > 1) {
-      const core = programOf(problem, corePairs(whole, relaxed, CORE_PICKS, best));
+    const core = (portion: number) => {
+      const program = programOf(problem, corePairs(whole, relaxed, CORE_PICKS, best));
       const known = best as { program: Program; result: RunResult } | null;
-      const start = known ? { start: translate(known.program, known.result, core) } : {};
-      take(core, run(highs, core, { seconds: left() * 0.8, gap, onProgress, ...start }));
+      const start = known ? { start: translate(known.program, known.result, program) } : {};
+      take(program, run(highs, program, { seconds: left() * portion, gap, onProgress, ...start }));
       onProgress();
+    };
+    // Annealing knows only whole fields; where fields may be split the exact program is tried first.
+    if (problem.splitMinFraction < 1) core(0.45);
+    if (wide() && left() > 1) {
+      const plan = annealed(highs, problem, whole, relaxed, left() * 0.7, onProgress);
+      if (plan) take(whole, plan);
     }
+    if (wide() && left() > 1) core(0.8);
   }
   if (wide() && left() > 0.5) {
     const known = best as { program: Program; result: RunResult } | null;
@@ -109,26 +114,40 @@ function gapOf(bound: number, objective: number): number {
   return Math.max(0, bound - objective) / Math.max(Math.abs(objective), 1e-9);
 }
 
+/** Which varieties to open: relaxed plans, each closing the varieties that the one before wanted least, until the count is kept. */
+function dive(highs: Highs, problem: PlanProblem, whole: Program, relaxed: RunResult, seconds: number) {
+  const most = problem.maxVarieties ?? problem.varieties.length;
+  const open = new Set(problem.varieties.map((_variety, v) => v));
+  let shares = whole.shareColumn.map((column) => relaxed.values?.[column] ?? 0);
+  if (whole.openColumn.length === 0) return { shares, open };
+  const loose = programOf(problem, whole.pairs, false, false);
+  const until = performance.now() + seconds * 1000;
+  for (;;) {
+    const closed = problem.varieties.flatMap((_variety, v) => (open.has(v) ? [] : [loose.openColumn[v] as number]));
+    const result = run(highs, loose, { seconds, gap: 0, relaxed: true, fixed: new Map(closed.map((column) => [column, 0])) });
+    if (!result.values) break;
+    const wanted = (v: number) => result.values?.[loose.openColumn[v] as number] ?? 0;
+    shares = loose.shareColumn.map((column) => result.values?.[column] ?? 0);
+    if (open.size <= most) break;
+    const hurry = performance.now() > until;
+    const drop = hurry ? open.size - most : Math.ceil((open.size - most) / 4);
+    for (const v of [...open].sort((a, b) => wanted(a) - wanted(b)).slice(0, drop)) open.delete(v);
+  }
+  return { shares, open };
+}
+
 /** A good plan of whole fields, from the relaxed one; `null` when none is found that keeps every limit. */
 function annealed(
+  highs: Highs,
   problem: PlanProblem,
   whole: Program,
   relaxed: RunResult,
   seconds: number,
   onProgress: () => void,
 ): RunResult | null {
-  const shares = whole.shareColumn.map((column) => relaxed.values?.[column] ?? 0);
-  const acresIn = problem.varieties.map(() => 0);
-  whole.pairs.forEach((pair, i) => {
-    acresIn[pair.variety] =
-      (acresIn[pair.variety] as number) + (shares[i] as number) * (problem.fields[pair.field]?.acres as number);
-  });
-  const most = problem.maxVarieties ?? problem.varieties.length;
-  const order = problem.varieties
-    .map((_variety, v) => v)
-    .sort((a, b) => (acresIn[b] as number) - (acresIn[a] as number))
-    .slice(0, most);
-  const found = improve(problem, whole.pairs, roundPlan(problem, whole.pairs, shares, new Set(order)), { seconds, onProgress });
+  const { shares, open } = dive(highs, problem, whole, relaxed, seconds / 3);
+  onProgress();
+  const found = improve(problem, whole.pairs, roundPlan(problem, whole.pairs, shares, open), { seconds, onProgress });
   if (!found) return null;
   const values = new Float64Array(whole.columns.length);
   whole.pairs.forEach((pair, i) => {

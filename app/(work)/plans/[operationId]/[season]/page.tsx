@@ -1,8 +1,9 @@
-import Link from 'next/link';
 import { notFound } from 'next/navigation';
 import { cache } from 'react';
 import { may } from '@/features/accounts/rights';
 import { requireViewer } from '@/features/accounts/viewer';
+import { scoreOperation } from '@/features/placement/actions';
+import { ScoreButton } from '@/features/placement/components/score-button';
 import { scoresOf } from '@/features/placement/queries';
 import {
   agreePlan,
@@ -119,11 +120,7 @@ export default async function PlanPage({ params }: Props) {
               ...(stale > 0 ? [`${stale} ${stale === 1 ? 'score is' : 'scores are'} stale`] : []),
               ...(unscored > 0 ? [`${unscored} ${unscored === 1 ? 'field is' : 'fields are'} not scored`] : []),
             ].join(', ')}
-            .{' '}
-            <Link href={`/fields?operation=${operationId}`} className="underline">
-              Score them on the fields page
-            </Link>{' '}
-            before proposing.
+            . <ScoreButton operationId={operationId} action={scoreOperation} label="Score the fields" kind="plain" />
           </Notice>
         ) : null}
         {view.lines.length === 0 ? (
