@@ -22,6 +22,12 @@ export function missingOf(facts: FieldFacts, soilSampleCount: number, hasSurvey:
   return soilSampleCount === 0 ? ['soil tests', ...missing] : missing;
 }
 
+/** A list of what is missing, short enough for a cell. */
+export function missingWords(missing: readonly string[]): string {
+  if (missing.length === 0) return 'nothing';
+  return missing.slice(0, 3).join(', ') + (missing.length > 3 ? ` and ${missing.length - 3} more` : '');
+}
+
 /** How firmly a pick stays first: words and a number. */
 export function holdWords(hold: number): string {
   const inTen = Math.round(hold * 10);

@@ -48,7 +48,7 @@ export interface MapViewProps {
   fitKey?: string;
   fitTo?: (Polygon | MultiPolygon)[];
   /** Free ground around what is fitted, pixels. */
-  fitPadding?: number;
+  fitPadding?: number | { top: number; right: number; bottom: number; left: number };
   /** While given, clicks draw an outline instead of selecting; it is handed over when closed. */
   onDrawn?: (outline: Polygon) => void;
   tiles?: TileLayer | null;

@@ -49,10 +49,10 @@ export default async function FieldsPage({ searchParams }: { searchParams: Promi
         trail={[{ label: operation.name }]}
         title="Fields"
         aside={
-          <>
+          <div className="flex gap-8 max-sm:w-full">
             <Figure value={formatAcres(acres)} label={`acres, ${lines.length} ${lines.length === 1 ? 'field' : 'fields'}`} />
-            {scoredLines.length > 0 ? <Figure value={bushels.toFixed(1)} label="bu/ac expected with the best picks" /> : null}
-          </>
+            {scoredLines.length > 0 ? <Figure value={bushels.toFixed(1)} label="bu/ac with the best picks" /> : null}
+          </div>
         }
         actions={
           <>

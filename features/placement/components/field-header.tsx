@@ -21,7 +21,7 @@ export function FieldHeader({
   const wettest = profile.drainageShares ? [...profile.drainageShares].sort((one, other) => other.share - one.share)[0] : null;
   return (
     <header>
-      <nav aria-label="Breadcrumb" className="text-mute">
+      <nav aria-label="Breadcrumb" className="mb-1 text-mute">
         <Link
           href={`/fields?operation=${field.operationId}`}
           className="underline decoration-line underline-offset-4 hover:decoration-ink"

@@ -15,6 +15,9 @@ import { DRAINAGE_CLASSES, type DrainageClass } from '../engine/model';
 import { FIELD_LAYERS, type FieldLayer } from '../view';
 import { pickColours } from './factor-colours';
 
+/** Room above for the layers and their key, and around for the neighbours. */
+const FIT_PADDING = { top: 132, right: 56, bottom: 48, left: 56 };
+
 /** Dry to wet. */
 const DRAINAGE_COLOURS: Record<DrainageClass, string> = {
   excessively: '#e8c98f',
@@ -143,6 +146,7 @@ export function FieldMap({
       }}
       fitKey={field.id}
       fitTo={fitTo}
+      fitPadding={FIT_PADDING}
       tiles={tiles}
       className={className}
     >

@@ -8,7 +8,7 @@ import type { SoilMapUnit, SoilSample } from '@/features/soil/model';
 import type { FieldSurface } from '@/features/soil/surface';
 import type { Outcome } from '@/lib/errors';
 import type { TileLayer } from '@/lib/map/style';
-import { LinkButton } from '@/lib/ui/button';
+import { Button, LinkButton } from '@/lib/ui/button';
 import { CAUTIONS } from '@/lib/ui/cautions';
 import { Caution, Notice, Panel } from '@/lib/ui/page';
 import type { DrainageClass, FieldProfile, PlacementRules, Ranking, SeasonContext, VarietyProfile } from '../engine/model';
@@ -59,6 +59,7 @@ export function FieldView(props: FieldViewProps) {
   const [tab, setTab] = useState<Tab>('picks');
   const [layer, setLayer] = useState<FieldLayer>(props.layer);
   const [changes, setChanges] = useState<WhatIf>({});
+  const [asking, setAsking] = useState(false);
   const [said, setSaid] = useState<Outcome<{ words: string }> | null>(null);
   const [, startTransition] = useTransition();
   const usual: Required<WhatIf> = {
@@ -87,26 +88,29 @@ export function FieldView(props: FieldViewProps) {
   }
 
   const putOnPlan = props.putOnPlan;
+  const put = putOnPlan
+    ? (varietyId: string) =>
+        startTransition(async () => {
+          setSaid(await putOnPlan(field.id, varietyId));
+          router.refresh();
+        })
+    : null;
+  const first = ranking?.picks[0];
   const seasonChart =
     ranking && ranking.picks.length > 0 ? (
-      <SeasonChart picks={ranking.picks.slice(0, 3)} season={season} plantingDate={plantingDate} />
+      <SeasonChart picks={ranking.picks.slice(0, 3)} season={season} plantingDate={plantingDate} tableOpen={tab === 'season'} />
     ) : null;
 
   return (
     <main id="main" className="grid lg:h-[calc(100dvh-3.5rem)] lg:grid-cols-[minmax(0,1fr)_min(34rem,44vw)] lg:overflow-hidden">
-      <div
-        className="sticky top-14 z-20 flex border-line border-b bg-hull lg:hidden"
-        role="tablist"
-        aria-label="Parts of the field page"
-      >
+      <nav className="sticky top-14 z-20 flex border-line border-b bg-hull lg:hidden" aria-label="Parts of the field page">
         {TABS.map((one) => (
           <button
             key={one.key}
             type="button"
-            role="tab"
-            aria-selected={tab === one.key}
+            aria-current={tab === one.key}
             onClick={() => setTab(one.key)}
-            className={clsx('min-h-12 grow px-2', tab === one.key ? 'border-bloom border-b-4 font-bold' : '')}
+            className={clsx('min-h-12 grow px-2', tab === one.key ? 'border-b-4 border-b-bloom font-bold' : '')}
           >
             {one.label}
           </button>
@@ -114,9 +118,9 @@ export function FieldView(props: FieldViewProps) {
         <a href={`/fields/${field.id}/facts`} className="flex min-h-12 grow items-center justify-center px-2">
           Facts
         </a>
-      </div>
+      </nav>
 
-      <div className={clsx('relative min-h-0 lg:flex lg:flex-col', tab === 'picks' && 'max-lg:hidden')}>
+      <div className={clsx('relative min-h-0 min-w-0 lg:flex lg:flex-col', tab === 'picks' && 'max-lg:hidden')}>
         <FieldMap
           field={field}
           neighbours={neighbours}
@@ -170,36 +174,35 @@ export function FieldView(props: FieldViewProps) {
         {ranking ? (
           <>
             <FixFirstBox fixes={ranking.fixFirst} />
-            <WhatIfBox
-              season={season.year}
-              facts={{ ...usual, ...changes }}
-              usual={usual}
-              changed={changed}
-              onChange={(facts) => setChanges((before) => ({ ...before, ...facts }))}
-              onReset={() => setChanges({})}
-            />
             <section aria-labelledby="picks">
-              <h2 id="picks" className="mb-2 text-[1.25em]">
-                Picks{' '}
-                <span className="font-normal font-sans text-mute text-[0.7em]">
-                  {varieties.length} in the line-up · {ranking.picks.length} fit this field
-                </span>
-              </h2>
+              <div className="mb-2 flex flex-wrap items-end justify-between gap-x-3 gap-y-1">
+                <h2 id="picks" className="text-[1.25em]">
+                  Picks{' '}
+                  <span className="font-normal font-sans text-mute text-[0.7em]">
+                    {varieties.length} in the line-up · {ranking.picks.length} fit this field
+                  </span>
+                </h2>
+                <Button small aria-expanded={asking || changed} aria-controls="what-if-box" onClick={() => setAsking(!asking)}>
+                  What if…
+                </Button>
+              </div>
+              <div id="what-if-box" className={asking || changed ? 'mb-3' : 'hidden'}>
+                <WhatIfBox
+                  season={season.year}
+                  facts={{ ...usual, ...changes }}
+                  usual={usual}
+                  changed={changed}
+                  onChange={(facts) => setChanges((before) => ({ ...before, ...facts }))}
+                  onReset={() => setChanges({})}
+                />
+              </div>
               <Picks
                 ranking={ranking}
                 stored={storedExpected}
                 varieties={varieties}
                 compareHref={`/fields/${field.id}/compare`}
                 planCode={props.planCode}
-                putOnPlan={
-                  putOnPlan
-                    ? (varietyId) =>
-                        startTransition(async () => {
-                          setSaid(await putOnPlan(field.id, varietyId));
-                          router.refresh();
-                        })
-                    : null
-                }
+                putOnPlan={put}
               />
             </section>
             <Questions questions={ranking.questions} factsHref={`/fields/${field.id}/facts`} />
@@ -225,15 +228,30 @@ export function FieldView(props: FieldViewProps) {
           type="button"
           onClick={() => {
             setTab('picks');
-            requestAnimationFrame(() => document.getElementById('what-if')?.scrollIntoView());
+            setAsking(true);
+            requestAnimationFrame(() => document.getElementById('picks')?.scrollIntoView());
           }}
           className="min-h-12 grow font-semibold"
         >
           What if…
         </button>
-        <LinkButton href={`/plans/${field.operationId}/${season.year}`} kind="action" className="grow">
-          The plan
-        </LinkButton>
+        {put && first && props.planCode !== first.code ? (
+          <Button
+            kind="action"
+            className="grow"
+            onClick={() => {
+              setTab('picks');
+              put(first.varietyId);
+              window.scrollTo({ top: 0 });
+            }}
+          >
+            Put {first.code} on plan
+          </Button>
+        ) : (
+          <LinkButton href={`/plans/${field.operationId}/${season.year}`} kind="action" className="grow">
+            The plan
+          </LinkButton>
+        )}
       </div>
     </main>
   );

@@ -9,8 +9,9 @@ import { MapView } from '@/lib/map/map-view';
 import type { TileLayer } from '@/lib/map/style';
 import { Tag } from '@/lib/ui/page';
 import { Table, Td, Th } from '@/lib/ui/table';
-import { type FieldLine, holdWords } from '../view';
+import { type FieldLine, holdWords, missingWords } from '../view';
 import { pickColours } from './factor-colours';
+import { FieldCards } from './field-cards';
 
 type SortKey = 'name' | 'areaAcres' | 'pickCode' | 'expected' | 'fixFirstBushels' | 'missing';
 
@@ -60,21 +61,20 @@ export function FieldsBoard({ lines, tiles }: { lines: FieldLine[]; tiles: TileL
   );
 
   return (
-    <div className="grid gap-5 xl:grid-cols-[minmax(0,5fr)_minmax(0,6fr)]">
-      <div className="flex border border-line xl:hidden" role="tablist" aria-label="List or map">
+    <div className="grid gap-5 xl:grid-cols-[minmax(0,4fr)_minmax(0,6fr)]">
+      <nav className="flex border border-line xl:hidden" aria-label="List or map">
         {(['list', 'map'] as const).map((one) => (
           <button
             key={one}
             type="button"
-            role="tab"
-            aria-selected={tab === one}
+            aria-current={tab === one}
             onClick={() => setTab(one)}
-            className={clsx('min-h-11 grow font-semibold', tab === one ? 'border-bloom border-b-4 bg-paper' : 'bg-hull')}
+            className={clsx('min-h-11 grow font-semibold', tab === one ? 'border-b-4 border-b-bloom bg-paper' : 'bg-hull')}
           >
             {one === 'list' ? 'List' : 'Map'}
           </button>
         ))}
-      </div>
+      </nav>
       <MapView
         ariaLabel="Map of the fields, coloured by pick. The table names the same picks."
         polygons={polygons}
@@ -88,13 +88,14 @@ export function FieldsBoard({ lines, tiles }: { lines: FieldLine[]; tiles: TileL
         )}
       />
       <div className={clsx('xl:block', tab === 'list' ? 'block' : 'hidden')}>
-        <Table caption="Fields with their best pick" stacked>
+        <FieldCards lines={sorted} colours={colours} />
+        <Table caption="Fields with their best pick" className="max-sm:hidden">
           <thead>
             <tr>
               {head('name', 'Field')}
               {head('areaAcres', 'Acres', true)}
               {head('pickCode', 'Best pick')}
-              {head('expected', 'Expected bu/ac', true)}
+              {head('expected', 'Bu/ac', true)}
               {head('fixFirstBushels', 'Fix first', true)}
               {head('missing', 'Missing')}
             </tr>
@@ -143,10 +144,7 @@ function FieldRow({
         </Link>
         <span className="block text-[0.92em] text-mute">{line.farmName ?? 'no farm'}</span>
       </Td>
-      <Td numeric>
-        {formatAcres(line.areaAcres)}
-        <span className="sm:hidden"> ac</span>
-      </Td>
+      <Td numeric>{formatAcres(line.areaAcres)}</Td>
       <Td>
         {line.pickCode ? (
           <>
@@ -173,10 +171,7 @@ function FieldRow({
         ) : (
           <>
             <b>{formatBushels(line.expected)}</b>
-            <span className="block text-[0.92em] text-mute">
-              {formatBand(line.low as number, line.high as number)}
-              <span className="sm:hidden"> bu/ac</span>
-            </span>
+            <span className="block text-[0.92em] text-mute">{formatBand(line.low as number, line.high as number)}</span>
           </>
         )}
       </Td>
@@ -187,14 +182,10 @@ function FieldRow({
             <span className="block text-[0.92em] text-mute">{line.fixFirstTitle}</span>
           </>
         ) : (
-          <span className="text-mute max-sm:hidden">—</span>
+          <span className="text-mute">—</span>
         )}
       </Td>
-      <Td className="text-mute">
-        {line.missing.length === 0
-          ? 'nothing'
-          : line.missing.slice(0, 3).join(', ') + (line.missing.length > 3 ? ` and ${line.missing.length - 3} more` : '')}
-      </Td>
+      <Td className="text-mute">{missingWords(line.missing)}</Td>
     </tr>
   );
 }

@@ -4,10 +4,10 @@ import { freezeCurve } from '../climate/freeze';
 import { seasonLine } from '../climate/season-line';
 import type { SeasonContext } from '../engine/model';
 
-const WIDTH = 760;
-const LEFT = 74;
-const ROW = 30;
-const TOP = 26;
+/** Two drawings of one chart: on a phone the names stand over the bars, so that the letters stay large enough to read. */
+const WIDE = { width: 760, left: 74, row: 32, top: 34, nameAbove: false };
+const NARROW = { width: 372, left: 0, row: 52, top: 44, nameAbove: true };
+type Shape = typeof WIDE;
 const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'];
 /** Year-to-year spread of R7, days (one standard deviation). */
 const R7_SPREAD_DAYS = 5;
@@ -22,10 +22,13 @@ export function SeasonChart({
   picks,
   season,
   plantingDate,
+  tableOpen = false,
 }: {
   picks: { code: string; relativeMaturity: number }[];
   season: SeasonContext;
   plantingDate: string;
+  /** Show the dates at once, where there is room for them. */
+  tableOpen?: boolean;
 }) {
   const rows: Row[] = picks.map(({ code, relativeMaturity }) => ({
     code,
@@ -33,10 +36,6 @@ export function SeasonChart({
   }));
   const first = dayOfYear(plantingDate) - 8;
   const last = Math.max(dayOfYear(`${season.year}-11-05`), season.climate.firstKillingFreezeDayOfYear + 12);
-  const x = (day: number) => LEFT + ((day - first) / (last - first)) * (WIDTH - LEFT - 12);
-  const dayOf = (date: string | null) =>
-    date === null ? last : dayOfYear(date) + (Number(date.slice(0, 4)) - season.year) * 365;
-  const height = TOP + rows.length * ROW + 18;
   const nearest = season.climate.stations[0];
   return (
     <section aria-labelledby="season-line">
@@ -48,45 +47,41 @@ export function SeasonChart({
           {nearest ? `, nearest station ${nearest.name}, ${Math.round(nearest.distanceMiles)} mi` : ''}
         </span>
       </h2>
-      <div className="overflow-x-auto">
-        <svg viewBox={`0 0 ${WIDTH} ${height}`} className="mt-1 w-full min-w-[34rem]" aria-hidden="true">
-          <MonthLines first={first} last={last} x={x} height={height} year={season.year} />
-          <FreezeShape season={season} first={first} last={last} x={x} height={height} />
-          {rows.map((row, index) => (
-            <SeasonBar key={row.code} row={row} y={TOP + index * ROW} x={x} dayOf={dayOf} />
-          ))}
-        </svg>
-      </div>
-      <div className="overflow-x-auto">
-        <table className="w-full text-left text-[0.92em]">
-          <caption className="sr-only">Stages of the first picks and the chance of a killing freeze</caption>
-          <thead>
-            <tr className="text-mute">
-              {['Pick', 'Up', 'R1 flower', 'R5 seed', 'R7 ± 5 d', 'R8 ripe', 'Freeze before R7'].map((words) => (
-                <th key={words} scope="col" className="py-1 pr-3 font-semibold whitespace-nowrap">
-                  {words}
-                </th>
-              ))}
-            </tr>
-          </thead>
-          <tbody>
-            {rows.map(({ code, line }) => (
-              <tr key={code} className="border-line border-t">
-                <th scope="row" className="py-1 pr-3 font-semibold whitespace-nowrap">
-                  {code}
-                </th>
-                {[line.ve, line.r1, line.r5, line.r7, line.r8].map((date, index) => (
-                  // biome-ignore lint/suspicious/noArrayIndexKey: the columns are fixed.
-                  <td key={index} className="py-1 pr-3 whitespace-nowrap">
-                    {date === null ? 'not reached' : formatDay(date)}
-                  </td>
+      <Chart rows={rows} season={season} first={first} last={last} shape={WIDE} className="hidden sm:block" />
+      <Chart rows={rows} season={season} first={first} last={last} shape={NARROW} className="sm:hidden" />
+      <details open={tableOpen || undefined}>
+        <summary className="cursor-pointer font-semibold">The stages as dates</summary>
+        <div className="overflow-x-auto">
+          <table className="w-full text-left text-[0.92em]">
+            <caption className="sr-only">Stages of the first picks and the chance of a killing freeze</caption>
+            <thead>
+              <tr className="text-mute">
+                {['Pick', 'Up', 'R1 flower', 'R5 seed', 'R7 ± 5 d', 'R8 ripe', 'Freeze before R7'].map((words) => (
+                  <th key={words} scope="col" className="py-1 pr-3 font-semibold whitespace-nowrap">
+                    {words}
+                  </th>
                 ))}
-                <td className="py-1 pr-3 whitespace-nowrap">{formatPercent(line.freeze.chanceBeforeR7)}</td>
               </tr>
-            ))}
-          </tbody>
-        </table>
-      </div>
+            </thead>
+            <tbody>
+              {rows.map(({ code, line }) => (
+                <tr key={code} className="border-line border-t">
+                  <th scope="row" className="py-1 pr-3 font-semibold whitespace-nowrap">
+                    {code}
+                  </th>
+                  {[line.ve, line.r1, line.r5, line.r7, line.r8].map((date, index) => (
+                    // biome-ignore lint/suspicious/noArrayIndexKey: the columns are fixed.
+                    <td key={index} className="py-1 pr-3 whitespace-nowrap">
+                      {date === null ? 'not reached' : formatDay(date)}
+                    </td>
+                  ))}
+                  <td className="py-1 pr-3 whitespace-nowrap">{formatPercent(line.freeze.chanceBeforeR7)}</td>
+                </tr>
+              ))}
+            </tbody>
+          </table>
+        </div>
+      </details>
       <p className="mt-1 text-[0.9em] text-mute">
         First 28 °F: half of years by {formatDay(isoDateOfDay(season.year, season.climate.firstKillingFreezeDayOfYear))}, give or
         take {season.climate.freezeStandardDeviationDays} days. Stages by CROPGRO-Soybean phase lengths (DSSAT Foundation),{' '}
@@ -96,109 +91,132 @@ export function SeasonChart({
   );
 }
 
-function MonthLines({
+interface Scale {
+  x: (day: number) => number;
+  dayOf: (date: string | null) => number;
+  shape: Shape;
+  height: number;
+}
+
+function Chart({
+  rows,
+  season,
   first,
   last,
-  x,
-  height,
-  year,
+  shape,
+  className,
 }: {
+  rows: Row[];
+  season: SeasonContext;
   first: number;
   last: number;
-  x: (day: number) => number;
-  height: number;
-  year: number;
+  shape: Shape;
+  className: string;
 }) {
+  const scale: Scale = {
+    shape,
+    height: shape.top + rows.length * shape.row + 16,
+    x: (day) => shape.left + ((day - first) / (last - first)) * (shape.width - shape.left - 8),
+    dayOf: (date) => (date === null ? last : dayOfYear(date) + (Number(date.slice(0, 4)) - season.year) * 365),
+  };
+  return (
+    <svg viewBox={`0 0 ${shape.width} ${scale.height}`} className={`mt-1 w-full ${className}`} aria-hidden="true">
+      <MonthLines first={first} last={last} scale={scale} year={season.year} />
+      <FreezeShape season={season} first={first} last={last} scale={scale} />
+      {rows.map((row, index) => (
+        <SeasonBar key={row.code} row={row} y={shape.top + index * shape.row} scale={scale} named={index === 0} />
+      ))}
+    </svg>
+  );
+}
+
+function MonthLines({ first, last, scale, year }: { first: number; last: number; scale: Scale; year: number }) {
   const months = MONTHS.map((name, index) => ({
     name,
     day: dayOfYear(`${year}-${String(index + 1).padStart(2, '0')}-01`),
   })).filter((month) => month.day >= first && month.day < last);
   return months.map((month) => (
     <g key={month.name}>
-      <line x1={x(month.day)} x2={x(month.day)} y1={18} y2={height - 12} stroke="#d9cfb9" />
-      <text x={x(month.day) + 4} y={13} fontSize="12" fill="#6a6055">
+      <line x1={scale.x(month.day)} x2={scale.x(month.day)} y1={16} y2={scale.height - 10} stroke="#d9cfb9" />
+      <text x={scale.x(month.day) + 3} y={11} fontSize="12" fill="#6a6055">
         {month.name}
       </text>
     </g>
   ));
 }
 
-function FreezeShape({
-  season,
-  first,
-  last,
-  x,
-  height,
-}: {
-  season: SeasonContext;
-  first: number;
-  last: number;
-  x: (day: number) => number;
-  height: number;
-}) {
-  const base = height - 12;
+function FreezeShape({ season, first, last, scale }: { season: SeasonContext; first: number; last: number; scale: Scale }) {
+  const base = scale.height - 10;
   const points = freezeCurve(season.climate, first, last)
     .filter((one) => one.chanceBy > 0.001)
-    .map((one) => `${x(one.day).toFixed(1)},${(base - one.chanceBy * (base - 22)).toFixed(1)}`);
+    .map((one) => `${scale.x(one.day).toFixed(1)},${(base - one.chanceBy * (base - 20)).toFixed(1)}`);
   if (points.length < 2) return null;
   const start = points[0]?.split(',')[0];
   return (
     <g>
-      <polygon points={`${start},${base} ${points.join(' ')} ${x(last)},${base}`} fill="#dfe5f0" />
-      <text x={WIDTH - 16} y={base - 5} fontSize="12" fill="#4a5a80" textAnchor="end">
-        chance of 28 °F by then
+      <polygon points={`${start},${base} ${points.join(' ')} ${scale.x(last)},${base}`} fill="#dfe5f0" />
+      <text x={scale.shape.width - 12} y={base - 5} fontSize="11.5" fill="#4a5a80" textAnchor="end">
+        {scale.shape.nameAbove ? '28 °F freeze' : 'chance of 28 °F by then'}
       </text>
     </g>
   );
 }
 
-function SeasonBar({
-  row,
-  y,
-  x,
-  dayOf,
-}: {
-  row: Row;
-  y: number;
-  x: (day: number) => number;
-  dayOf: (date: string | null) => number;
-}) {
+function SeasonBar({ row, y, scale, named }: { row: Row; y: number; scale: Scale; named: boolean }) {
   const { line, code } = row;
+  const { x, dayOf, shape } = scale;
   const parts = [
     { from: line.planted, to: line.r1, fill: '#b9d0b9' },
     { from: line.r1, to: line.r5, fill: '#7ea583' },
     { from: line.r5, to: line.r7, fill: '#3f6f4a' },
   ];
   const r7 = dayOf(line.r7);
+  const barY = shape.nameAbove ? y + 8 : y + 4;
+  const stages = [
+    { name: 'R1', date: line.r1 },
+    { name: 'R5', date: line.r5 },
+  ];
   return (
     <g>
-      <text x={0} y={y + 14} fontSize="13" fontWeight="700" fill="#221d17">
+      <text x={0} y={shape.nameAbove ? y : barY + 10} fontSize="13" fontWeight="700" fill="#221d17">
         {code}
       </text>
       {parts.map((part) => (
         <rect
           key={part.fill}
           x={x(dayOf(part.from))}
-          y={y + 5}
+          y={barY}
           width={Math.max(0, x(dayOf(part.to)) - x(dayOf(part.from)))}
-          height={10}
+          height={11}
           fill={part.fill}
         />
       ))}
+      {named
+        ? stages.map(({ name, date }) =>
+            date ? (
+              <text key={name} x={x(dayOf(date))} y={barY - 4} fontSize="11" fill="#221d17" textAnchor="middle">
+                {shape.nameAbove ? name : `${name} ${formatDay(date)}`}
+              </text>
+            ) : null,
+          )
+        : null}
       {line.r7 ? (
         <>
           <line
             x1={x(r7 - R7_SPREAD_DAYS)}
             x2={x(r7 + R7_SPREAD_DAYS)}
-            y1={y + 10}
-            y2={y + 10}
+            y1={barY + 5.5}
+            y2={barY + 5.5}
             stroke="#221d17"
             strokeWidth={1.5}
           />
-          <text x={x(r7) + 8} y={y + 3} fontSize="11" fill="#221d17">
+          <text x={x(r7)} y={barY - 4} fontSize="11" fill="#221d17" textAnchor={shape.nameAbove ? 'middle' : 'start'}>
             R7 {formatDay(line.r7)}
           </text>
         </>
+      ) : null}
+      {line.r8 ? (
+        <line x1={x(dayOf(line.r8))} x2={x(dayOf(line.r8))} y1={barY} y2={barY + 11} stroke="#3f6f4a" strokeWidth={2} />
       ) : null}
     </g>
   );

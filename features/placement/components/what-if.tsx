@@ -33,9 +33,9 @@ export function WhatIfBox({
       className={`border px-4 py-3 ${changed ? 'border-bloom bg-bloom-light' : 'border-line bg-paper'}`}
     >
       <div className="flex flex-wrap items-center justify-between gap-2">
-        <h2 id="what-if" className="text-[1.1em]">
+        <h3 id="what-if" className="text-[1.1em]">
           What if…
-        </h2>
+        </h3>
         {changed ? (
           <Button small onClick={onReset}>
             Back to the facts

@@ -104,7 +104,7 @@ export function ZoneBoard({
         fitKey={`${zones.length} ${outline ? 'new' : ''}`}
         fitTo={fitTo}
         tiles={tiles}
-        className="h-[55dvh] border border-line lg:sticky lg:top-20 lg:h-[calc(100dvh-13rem)]"
+        className="h-[55dvh] border border-line lg:sticky lg:top-20 lg:h-[calc(100dvh-17.5rem)]"
       >
         <div className="absolute top-3 left-3 flex max-w-[calc(100%-1.5rem)] flex-wrap items-start gap-2">
           <Button kind={drawing ? 'action' : 'plain'} onClick={() => setDrawing(!drawing)} aria-pressed={drawing}>
