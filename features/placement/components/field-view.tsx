@@ -131,7 +131,7 @@ export function FieldView(props: FieldViewProps) {
           mapUnits={props.mapUnits}
           statedDrainage={props.statedDrainage}
           tiles={props.tiles}
-          className={clsx('h-[72dvh] lg:block lg:h-auto lg:min-h-64 lg:grow', tab === 'map' ? 'block' : 'hidden')}
+          className={clsx('h-[calc(100dvh-9.6rem)] lg:block lg:h-auto lg:min-h-64 lg:grow', tab === 'map' ? 'block' : 'hidden')}
         />
         {seasonChart ? (
           <div

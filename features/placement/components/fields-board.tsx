@@ -158,7 +158,9 @@ function FieldRow({
                 <b>{line.pickCode}</b> <span className="text-mute">RM {line.pickRelativeMaturity?.toFixed(1)}</span>
               </span>
             </span>
-            <span className="block text-[0.92em] text-mute">{line.hold === null ? '' : holdWords(line.hold)}</span>
+            <span className="block text-[0.92em] text-mute xl:whitespace-nowrap">
+              {line.hold === null ? '' : holdWords(line.hold)}
+            </span>
           </>
         ) : (
           <span className="text-mute">{line.scored ? 'no variety fits' : 'not scored yet'}</span>
@@ -171,7 +173,9 @@ function FieldRow({
         ) : (
           <>
             <b>{formatBushels(line.expected)}</b>
-            <span className="block text-[0.92em] text-mute">{formatBand(line.low as number, line.high as number)}</span>
+            <span className="block whitespace-nowrap text-[0.92em] text-mute">
+              {formatBand(line.low as number, line.high as number)}
+            </span>
           </>
         )}
       </Td>

@@ -9,6 +9,16 @@ const WIDE = { width: 760, left: 74, row: 32, top: 34, nameAbove: false };
 const NARROW = { width: 372, left: 0, row: 52, top: 44, nameAbove: true };
 type Shape = typeof WIDE;
 const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'];
+/** Heads of the table of dates: short, and what a wide screen adds. */
+const HEADS = [
+  ['Pick', ''],
+  ['Up', ''],
+  ['R1', ' flower'],
+  ['R5', ' seed'],
+  ['R7', ' ± 5 d'],
+  ['R8', ' ripe'],
+  ['Freeze', ' before R7'],
+] as const;
 /** Year-to-year spread of R7, days (one standard deviation). */
 const R7_SPREAD_DAYS = 5;
 
@@ -56,9 +66,10 @@ export function SeasonChart({
             <caption className="sr-only">Stages of the first picks and the chance of a killing freeze</caption>
             <thead>
               <tr className="text-mute">
-                {['Pick', 'Up', 'R1 flower', 'R5 seed', 'R7 ± 5 d', 'R8 ripe', 'Freeze before R7'].map((words) => (
-                  <th key={words} scope="col" className="py-1 pr-3 font-semibold whitespace-nowrap">
+                {HEADS.map(([words, more], index) => (
+                  <th key={words} scope="col" className={`py-1 pr-2 font-semibold sm:pr-3 ${index === 1 ? 'max-sm:hidden' : ''}`}>
                     {words}
+                    <span className="max-sm:hidden">{more}</span>
                   </th>
                 ))}
               </tr>
@@ -66,12 +77,12 @@ export function SeasonChart({
             <tbody>
               {rows.map(({ code, line }) => (
                 <tr key={code} className="border-line border-t">
-                  <th scope="row" className="py-1 pr-3 font-semibold whitespace-nowrap">
+                  <th scope="row" className="py-1 pr-2 font-semibold whitespace-nowrap sm:pr-3">
                     {code}
                   </th>
                   {[line.ve, line.r1, line.r5, line.r7, line.r8].map((date, index) => (
                     // biome-ignore lint/suspicious/noArrayIndexKey: the columns are fixed.
-                    <td key={index} className="py-1 pr-3 whitespace-nowrap">
+                    <td key={index} className={`py-1 pr-2 whitespace-nowrap sm:pr-3 ${index === 0 ? 'max-sm:hidden' : ''}`}>
                       {date === null ? 'not reached' : formatDay(date)}
                     </td>
                   ))}
@@ -121,7 +132,7 @@ function Chart({
   };
   return (
     <svg viewBox={`0 0 ${shape.width} ${scale.height}`} className={`mt-1 w-full ${className}`} aria-hidden="true">
-      <MonthLines first={first} last={last} scale={scale} year={season.year} />
+      <MonthLines first={first} scale={scale} year={season.year} />
       <FreezeShape season={season} first={first} last={last} scale={scale} />
       {rows.map((row, index) => (
         <SeasonBar key={row.code} row={row} y={shape.top + index * shape.row} scale={scale} named={index === 0} />
@@ -130,11 +141,11 @@ function Chart({
   );
 }
 
-function MonthLines({ first, last, scale, year }: { first: number; last: number; scale: Scale; year: number }) {
+function MonthLines({ first, scale, year }: { first: number; scale: Scale; year: number }) {
   const months = MONTHS.map((name, index) => ({
     name,
     day: dayOfYear(`${year}-${String(index + 1).padStart(2, '0')}-01`),
-  })).filter((month) => month.day >= first && month.day < last);
+  })).filter((month) => month.day >= first && scale.x(month.day) < scale.shape.width - 32);
   return months.map((month) => (
     <g key={month.name}>
       <line x1={scale.x(month.day)} x2={scale.x(month.day)} y1={16} y2={scale.height - 10} stroke="#d9cfb9" />
