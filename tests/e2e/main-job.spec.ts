@@ -176,6 +176,7 @@ test('a dealership does its main job, end to end, on real input', async ({ brows
   await test.step('what-if recomputes in the browser, and the grower compares', async () => {
     const first = grower.locator('ol > li').first();
     const before = await first.textContent();
+    await grower.getByRole('button', { name: 'What if…' }).first().click();
     await grower.getByLabel('Row width, in').selectOption('7.5');
     await expect.poll(() => first.textContent()).not.toBe(before);
     await grower.getByRole('button', { name: 'Back to the facts' }).click();
