@@ -50,7 +50,7 @@ describe('what a list says of a field', () => {
       aField(),
       ['a', 'b', 'c', 'd', 'e'].map((id) => aVariety({ id, code: id })),
       aSeason(),
-      RULES,
+      someRules(),
     );
     expect(comparedIds('e,b', ranking)).toEqual(['e', 'b']);
     expect(comparedIds('e,e', ranking)).toHaveLength(3);
