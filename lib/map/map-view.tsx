@@ -127,7 +127,14 @@ export function MapView(props: MapViewProps) {
     map.on('mouseleave', 'polygon-fill', () => {
       map.getCanvas().style.cursor = '';
     });
-    const observer = new ResizeObserver(() => map.resize());
+    let wasHidden = frame.current.clientWidth === 0;
+    const observer = new ResizeObserver(([entry]) => {
+      map.resize();
+      // A map in a tab that was not shown had no size to fit its fields into.
+      const hidden = entry?.contentRect.width === 0;
+      if (wasHidden && !hidden) fitNow.current();
+      wasHidden = hidden;
+    });
     observer.observe(frame.current);
     return () => {
       observer.disconnect();
@@ -182,14 +189,19 @@ export function MapView(props: MapViewProps) {
     );
   }, [ready, raster]);
 
-  // biome-ignore lint/correctness/useExhaustiveDependencies: the view moves when the key says so, not whenever colours change.
-  useEffect(() => {
+  const fitNow = useRef<() => void>(() => undefined);
+  fitNow.current = () => {
     const map = mapRef.current;
     const shapes = fitTo ?? polygons.map((one) => one.geometry);
     if (!map || !ready || shapes.length === 0) return;
     const [west, south, east, north] = boundsOf(shapes);
-    if (Number.isFinite(west)) map.fitBounds([west, south, east, north], { padding: fitPadding, animate: false, maxZoom: 16.5 });
-  }, [ready, fitKey]);
+    if (!Number.isFinite(west)) return;
+    const narrow = map.getContainer().clientWidth < 480;
+    const padding = narrow && typeof fitPadding === 'number' ? Math.min(fitPadding, 20) : fitPadding;
+    map.fitBounds([west, south, east, north], { padding, animate: false, maxZoom: 16.5 });
+  };
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the view moves when the key says so, not whenever colours change.
+  useEffect(() => fitNow.current(), [ready, fitKey]);
 
   return (
     <section aria-label={ariaLabel} className={clsx('relative overflow-hidden bg-hull-deep', className)}>

@@ -1,8 +1,13 @@
+import type { CSSProperties } from 'react';
 import { formatBand, formatBushels } from '@/lib/format';
 import { Table, Td, Th } from '@/lib/ui/table';
 import type { Assessment, FactorId, Pick, Ranking, VarietyProfile } from '../engine/model';
 import { holdWords } from '../view';
 import { FACTOR_COLOURS } from './factor-colours';
+
+/** On a phone each line's name stands over its figures, so that four varieties fit side by side. */
+const STACKED =
+  'max-sm:[&_tr]:grid max-sm:[&_tr]:[grid-template-columns:repeat(var(--varieties),minmax(0,1fr))] max-sm:[&_tr]:border-line max-sm:[&_tr]:border-b max-sm:[&_tbody_th]:col-span-full max-sm:[&_tbody_th]:border-0! max-sm:[&_tbody_th]:pb-0 max-sm:[&_td]:border-0! max-sm:[&_thead_th:first-child]:hidden max-sm:[&_thead_th]:whitespace-normal max-sm:[&_thead_th]:px-2 max-sm:[&_td]:px-2';
 
 /** Lines this much apart between the varieties are marked, bu/ac. */
 const MARKED_FROM = 0.3;
@@ -71,80 +76,82 @@ export function CompareTable({ picks, ranking, varieties }: { picks: Pick[]; ran
     );
   };
   return (
-    <Table caption="Varieties compared, bushels per acre">
-      <thead>
-        <tr>
-          <Th>bu/ac</Th>
-          {picks.map((pick) => (
-            <Th key={pick.varietyId} numeric className="text-ink">
-              <span className="font-display text-lg">{pick.code}</span>
-              <span className="block font-normal text-mute">{rankWords(ranking, pick)}</span>
-            </Th>
-          ))}
-        </tr>
-      </thead>
-      <tbody>
-        {row(
-          'What this field can carry',
-          picks.map((pick) => pick.potential),
-        )}
-        {linesOf(picks).map((line) =>
-          row(
-            line.label,
-            picks.map((pick) => pick.ledger.find((one) => one.factor === line.factor)?.bushels ?? 0),
-            { factor: line.factor },
-          ),
-        )}
-        {row(
-          'Small lines together',
-          picks.map((pick) => pick.gatheredBushels),
-          { factor: 'gathered' },
-        )}
-        {picks.some((pick) => pick.trialBushels !== 0)
-          ? row(
-              'Trials',
-              picks.map((pick) => pick.trialBushels),
-            )
-          : null}
-        {row(
-          'Expected',
-          picks.map((pick) => pick.expected),
-          { strong: true },
-        )}
-        <tr>
-          <th scope="row" className="border-line border-b px-3 py-2 text-left font-normal">
-            Range, 10th to 90th percentile
-          </th>
-          {picks.map((pick) => (
-            <Td key={pick.varietyId} numeric>
-              {formatBand(pick.low, pick.high)}
-            </Td>
-          ))}
-        </tr>
-        <tr>
-          <th scope="row" className="border-ink border-b-2 px-3 py-2 text-left font-normal">
-            Hold
-          </th>
-          {picks.map((pick) => (
-            <Td key={pick.varietyId} numeric className="border-ink border-b-2">
-              {holdWords(pick.hold)}
-            </Td>
-          ))}
-        </tr>
-        {TRAITS.map((trait) => (
-          <tr key={trait.label}>
-            <th scope="row" className="border-line border-b px-3 py-2 text-left font-normal text-mute">
-              {trait.label}
+    <div style={{ '--varieties': picks.length } as CSSProperties}>
+      <Table caption="Varieties compared, bushels per acre" className={STACKED}>
+        <thead>
+          <tr>
+            <Th>bu/ac</Th>
+            {picks.map((pick) => (
+              <Th key={pick.varietyId} numeric className="text-ink">
+                <span className="font-display text-lg">{pick.code}</span>
+                <span className="block font-normal text-mute">{rankWords(ranking, pick)}</span>
+              </Th>
+            ))}
+          </tr>
+        </thead>
+        <tbody>
+          {row(
+            'What this field can carry',
+            picks.map((pick) => pick.potential),
+          )}
+          {linesOf(picks).map((line) =>
+            row(
+              line.label,
+              picks.map((pick) => pick.ledger.find((one) => one.factor === line.factor)?.bushels ?? 0),
+              { factor: line.factor },
+            ),
+          )}
+          {row(
+            'Small lines together',
+            picks.map((pick) => pick.gatheredBushels),
+            { factor: 'gathered' },
+          )}
+          {picks.some((pick) => pick.trialBushels !== 0)
+            ? row(
+                'Trials',
+                picks.map((pick) => pick.trialBushels),
+              )
+            : null}
+          {row(
+            'Expected',
+            picks.map((pick) => pick.expected),
+            { strong: true },
+          )}
+          <tr>
+            <th scope="row" className="border-line border-b px-3 py-2 text-left font-normal">
+              Range, 10th to 90th percentile
             </th>
-            {traits.map((variety, index) => (
-              <Td key={picks[index]?.varietyId} numeric>
-                {variety ? trait.of(variety) : '—'}
+            {picks.map((pick) => (
+              <Td key={pick.varietyId} numeric>
+                {formatBand(pick.low, pick.high)}
               </Td>
             ))}
           </tr>
-        ))}
-      </tbody>
-    </Table>
+          <tr>
+            <th scope="row" className="border-ink! border-b-2! px-3 py-2 text-left font-normal">
+              Hold
+            </th>
+            {picks.map((pick) => (
+              <Td key={pick.varietyId} numeric className="border-ink! border-b-2!">
+                {holdWords(pick.hold)}
+              </Td>
+            ))}
+          </tr>
+          {TRAITS.map((trait) => (
+            <tr key={trait.label}>
+              <th scope="row" className="border-line border-b px-3 py-2 text-left font-normal text-mute">
+                {trait.label}
+              </th>
+              {traits.map((variety, index) => (
+                <Td key={picks[index]?.varietyId} numeric>
+                  {variety ? trait.of(variety) : '—'}
+                </Td>
+              ))}
+            </tr>
+          ))}
+        </tbody>
+      </Table>
+    </div>
   );
 }
 

@@ -4,7 +4,7 @@ import { useDeferredValue, useMemo, useState, useTransition } from 'react';
 import type { Outcome } from '@/lib/errors';
 import { Button } from '@/lib/ui/button';
 import { Notice } from '@/lib/ui/page';
-import type { PlacementRules, VarietyProfile } from '../engine/model';
+import type { PlacementRules, Ranking, VarietyProfile } from '../engine/model';
 import { rank } from '../engine/rank';
 import type { EngineInputs } from '../inputs';
 import { RULE_GROUPS, type Rule } from '../rules';
@@ -24,6 +24,12 @@ const ALL_RULES = RULE_GROUPS.flatMap((group) => group.rules);
 function valueTyped(rule: Rule, text: string): number | null {
   const value = Number(text.trim().replace('−', '-').replace(',', '.'));
   return text.trim() !== '' && Number.isFinite(value) && value >= rule.low && value <= rule.high ? value : null;
+}
+
+/** The sample field's ranking with these values. */
+function rankWith(sample: SampleField, overrides: PlacementRules['overrides']): Ranking {
+  const { profile, season, rules } = sample.engine;
+  return rank(profile, sample.varieties, season, { ...rules, overrides });
 }
 
 /** Coefficients that a manager may change, by subject, and what the values being typed do to one field, worked out as they are typed. */
@@ -58,12 +64,11 @@ export function RulesBoard({
     }
     return result;
   }, [values, tried]);
-  const ranked = useMemo(() => {
-    if (!sample) return null;
-    const rankWith = (own: PlacementRules['overrides']) =>
-      rank(sample.engine.profile, sample.varieties, sample.engine.season, { ...sample.engine.rules, overrides: own });
-    return { before: rankWith(values), usual: rankWith({}), after: rankWith(overrides) };
-  }, [sample, values, overrides]);
+  const standingRankings = useMemo(
+    () => (sample ? { before: rankWith(sample, values), usual: rankWith(sample, {}) } : null),
+    [sample, values],
+  );
+  const after = useMemo(() => (sample ? rankWith(sample, overrides) : null), [sample, overrides]);
 
   const wanted = search.trim().toLowerCase();
   const shown = (rule: Rule) => wanted === '' || `${rule.words} ${rule.does}`.toLowerCase().includes(wanted);
@@ -151,7 +156,9 @@ export function RulesBoard({
               ) : null}
             </div>
           </div>
-          {sample && ranked ? <RuleEffect field={sample} {...ranked} changed={changed.length > 0} /> : null}
+          {sample && standingRankings && after ? (
+            <RuleEffect field={sample} {...standingRankings} after={after} changed={changed.length > 0} />
+          ) : null}
         </div>
       </div>
     </div>

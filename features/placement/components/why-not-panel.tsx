@@ -5,7 +5,7 @@ import type { Pick, Ranking, VarietyProfile } from '../engine/model';
 import type { EngineInputs } from '../inputs';
 import { FACTOR_COLOURS } from './factor-colours';
 
-/** Why not the other one, and what would have to change for it to be first: both worked out by the engine. */
+/** Why a pick is not the first one, and what would have to change for it to be first: both worked out by the engine. */
 export function WhyNotPanel({
   pick,
   ranking,
@@ -18,18 +18,11 @@ export function WhyNotPanel({
   varieties: VarietyProfile[];
 }) {
   const first = ranking.picks[0] as Pick;
-  const other = pick.varietyId === first.varietyId ? ranking.picks[1] : pick;
-  if (!other) return null;
-  const why = whyNot(first, other);
-  const change =
-    pick.varietyId === first.varietyId
-      ? null
-      : whatWouldMakeItFirst(engine.profile, varieties, engine.season, engine.rules, pick.varietyId);
+  const why = whyNot(first, pick);
+  const change = whatWouldMakeItFirst(engine.profile, varieties, engine.season, engine.rules, pick.varietyId);
   return (
     <Panel>
-      <h2 className="text-lg">
-        {pick.varietyId === first.varietyId ? `Why ${first.code}, and not ${other.code}?` : `Why not ${pick.code}?`}
-      </h2>
+      <h2 className="text-lg">Why not {pick.code}?</h2>
       <p className="mt-1">{why.sentence}</p>
       <ul className="mt-2">
         {why.lines.slice(0, 5).map((line) => (
@@ -44,22 +37,18 @@ export function WhyNotPanel({
         ))}
       </ul>
       <p className="mt-1 text-[0.9em] text-mute">
-        Plus: {first.code} loses less there. Minus: {other.code} does.
+        Plus: {first.code} loses less there. Minus: {pick.code} does.
       </p>
-      {change ? (
-        <>
-          <h3 className="mt-3">What would have to change for {pick.code} to be first?</h3>
-          <p className="mt-1">{change.sentence}</p>
-          {change.ways.length > 1 ? (
-            <ul className="mt-1 list-disc pl-5">
-              {change.ways.slice(0, 4).map((way) => (
-                <li key={way.words}>
-                  {way.words}: {formatBushels(way.expected)} bu/ac, ahead by {formatBushels(way.leadBushels)}
-                </li>
-              ))}
-            </ul>
-          ) : null}
-        </>
+      <h3 className="mt-3">What would have to change for {pick.code} to be first?</h3>
+      <p className="mt-1">{change.sentence}</p>
+      {change.ways.length > 1 ? (
+        <ul className="mt-1 list-disc pl-5">
+          {change.ways.slice(0, 4).map((way) => (
+            <li key={way.words}>
+              {way.words}: {formatBushels(way.expected)} bu/ac, ahead by {formatBushels(way.leadBushels)}
+            </li>
+          ))}
+        </ul>
       ) : null}
     </Panel>
   );

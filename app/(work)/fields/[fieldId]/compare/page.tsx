@@ -29,6 +29,7 @@ export default async function ComparePage({
   const ranking = rank(engine.profile, varieties, engine.season, engine.rules);
   const ids = comparedIds((await searchParams).varieties, ranking);
   const picks = ids.flatMap((id) => ranking.picks.find((pick) => pick.varietyId === id) ?? []);
+  const others = picks.filter((pick) => pick.varietyId !== ranking.picks[0]?.varietyId);
   return (
     <Page>
       <PageHeader
@@ -50,7 +51,7 @@ export default async function ComparePage({
           />
           <CompareTable picks={picks} ranking={ranking} varieties={varieties} />
           <div className="mt-5 grid gap-4 lg:grid-cols-2">
-            {picks.map((pick) => (
+            {others.map((pick) => (
               <WhyNotPanel key={pick.varietyId} pick={pick} ranking={ranking} engine={engine} varieties={varieties} />
             ))}
           </div>
