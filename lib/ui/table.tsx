@@ -18,7 +18,11 @@ export function Table({
   stacked?: boolean;
 }) {
   return (
-    <section className={clsx('relative overflow-x-auto', stacked && STACKED, className)} aria-label={caption}>
+    <section
+      className={clsx('relative overflow-x-auto', stacked && STACKED, className)}
+      aria-label={caption}
+      tabIndex={stacked ? undefined : 0}
+    >
       <table className="w-full border-collapse bg-white text-left">
         <caption className="sr-only">{caption}</caption>
         {children}

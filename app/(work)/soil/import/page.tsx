@@ -15,6 +15,7 @@ import {
 } from '@/features/soil/actions';
 import { ImportSurvey } from '@/features/soil/components/import-survey';
 import { ImportTests } from '@/features/soil/components/import-tests';
+import { found } from '@/lib/found';
 import { LinkButton } from '@/lib/ui/button';
 import { EmptyState, Page, PageHeader } from '@/lib/ui/page';
 
@@ -25,7 +26,7 @@ type Search = Promise<{ operation?: string; kind?: string }>;
 export default async function ImportSoilPage({ searchParams }: { searchParams: Search }) {
   const viewer = await requireViewer();
   const { operation: requested, kind } = await searchParams;
-  const operation = await chosenOperation(viewer, requested);
+  const operation = await found(chosenOperation(viewer, requested));
   if (!operation) {
     return (
       <Page narrow>
