@@ -1,5 +1,5 @@
 import * as maplibre from 'maplibre-gl';
-import { boundsOf } from './bounds';
+import { boundsOf, labelPointOf } from './bounds';
 import type { MapPoint, MapPolygon } from './map-view';
 
 /** Labels are page elements over the map, so that they take the page's fonts and can be read by any program. */
@@ -21,6 +21,7 @@ function labelElement(one: { label?: string; sublabel?: string }): HTMLElement {
 interface Placed {
   element: HTMLElement;
   bounds: [number, number, number, number];
+  at: [number, number];
 }
 
 /** Narrowest field that is named at all, pixels; narrower ones are named in the table. */
@@ -32,7 +33,7 @@ const NARROWEST = 30;
  */
 function fitLabels(map: maplibre.Map, labels: Placed[]): void {
   const taken: { left: number; right: number; top: number; bottom: number }[] = [];
-  for (const { element, bounds } of labels) {
+  for (const { element, bounds, at } of labels) {
     const [west, south, east, north] = bounds;
     const from = map.project([west, north]);
     const to = map.project([east, south]);
@@ -45,8 +46,7 @@ function fitLabels(map: maplibre.Map, labels: Placed[]): void {
       under.style.display = '';
       if (under.scrollWidth > width - 4 || element.offsetHeight > height) under.style.display = 'none';
     }
-    const x = (from.x + to.x) / 2;
-    const y = (from.y + to.y) / 2;
+    const { x, y } = map.project(at);
     const box = {
       left: x - element.offsetWidth / 2,
       right: x + element.offsetWidth / 2,
@@ -65,12 +65,10 @@ function fitLabels(map: maplibre.Map, labels: Placed[]): void {
 export function addLabels(map: maplibre.Map, polygons: MapPolygon[], points: MapPoint[]): () => void {
   const labels = polygons
     .filter((one) => one.label)
-    .map((one): Placed => ({ element: labelElement(one), bounds: boundsOf([one.geometry]) }))
+    .map((one): Placed => ({ element: labelElement(one), bounds: boundsOf([one.geometry]), at: labelPointOf(one.geometry) }))
     .sort((one, other) => size(other) - size(one));
   const markers = [
-    ...labels.map(({ element, bounds: [west, south, east, north] }) =>
-      new maplibre.Marker({ element }).setLngLat([(west + east) / 2, (south + north) / 2]).addTo(map),
-    ),
+    ...labels.map(({ element, at }) => new maplibre.Marker({ element }).setLngLat(at).addTo(map)),
     ...points
       .filter((one) => one.label)
       .map((one) =>

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { boundsOf } from '@/lib/map/bounds';
+import { boundsOf, labelPointOf } from '@/lib/map/bounds';
 import { pointFeatures, polygonFeatures } from '@/lib/map/layers';
 import { PH_SCALE, phClass } from '@/lib/map/ph-scale';
 import { MAP_COLORS, paperStyle } from '@/lib/map/style';
@@ -71,5 +71,22 @@ describe('what the map is given', () => {
       ]),
     ).toEqual([-95, 41, -92, 43]);
     expect(boundsOf([]).every(Number.isFinite)).toBe(false);
+  });
+
+  test('a label stands in the middle of the ground, in the larger part of two', () => {
+    const box = (west: number, side: number) => [
+      [
+        [west, 42],
+        [west + side, 42],
+        [west + side, 42 + side],
+        [west, 42 + side],
+        [west, 42],
+      ],
+    ];
+    const [longitude, latitude] = labelPointOf({ type: 'MultiPolygon', coordinates: [box(-95, 0.01), box(-93, 0.02)] });
+    expect(longitude).toBeCloseTo(-92.99, 9);
+    expect(latitude).toBeCloseTo(42.01, 9);
+    const [inTriangle] = labelPointOf(square);
+    expect(inTriangle).toBeCloseTo(-92 - 1 / 3, 9);
   });
 });

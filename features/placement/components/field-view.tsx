@@ -167,7 +167,7 @@ export function FieldView(props: FieldViewProps) {
           </Notice>
         ) : null}
         {said ? (
-          <Notice kind={said.ok ? 'good' : 'error'}>
+          <Notice kind={said.ok ? 'good' : 'error'} className="sticky top-28 z-10 lg:top-0">
             {said.ok ? said.value.words : said.problems.map((problem) => problem.message).join(' ')}
           </Notice>
         ) : null}

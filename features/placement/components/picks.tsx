@@ -62,7 +62,9 @@ export function Picks({
                     <span>
                       <span className="font-bold text-[1.08em]">{pick.code}</span>
                       {planCode === pick.code ? (
-                        <span className="ml-2 border border-leaf bg-leaf-light px-1.5 text-[0.85em]">on the plan</span>
+                        <span className="ml-2 inline-block whitespace-nowrap border border-leaf bg-leaf-light px-1.5 text-[0.85em]">
+                          on the plan
+                        </span>
                       ) : null}
                       <span className="block text-[0.92em] text-mute">
                         RM {pick.relativeMaturity.toFixed(1)}

@@ -15,9 +15,9 @@ import { NewZone } from './zone-form';
 import { ZoneList } from './zone-list';
 
 /** Early to late, light to deep: the words beside each say the range. */
-const ZONE_COLOURS = ['#e9e0f3', '#d6c5ea', '#c2aade', '#ab8dcd', '#9270b8', '#7856a0', '#5b3a86'];
+const ZONE_COLOURS = ['#f1eaf8', '#e6daf2', '#dacaec', '#cebae5', '#c2aade', '#b69bd8'];
 
-/** The colour of a zone by the middle of its range, between RM 0 and 6. */
+/** The colour of a zone by the middle of its range, from the earliest of the dealership's zones to the latest. */
 function zoneColour(zone: Pick<MaturityZone, 'relativeMaturityFrom' | 'relativeMaturityTo'>, low: number, high: number): string {
   const middle = (zone.relativeMaturityFrom + zone.relativeMaturityTo) / 2;
   const share = high - low < 0.05 ? 0.4 : (middle - low) / (high - low);
@@ -114,7 +114,7 @@ export function ZoneBoard({
             <p className="border border-line bg-paper px-3 py-2">Click each corner. Click the first one again to close it.</p>
           ) : null}
         </div>
-        <div className="absolute right-3 bottom-24">
+        <div className="pointer-events-none absolute right-3 bottom-24">
           <Legend
             title="On this map"
             items={[
