@@ -47,9 +47,11 @@ function fitLabels(map: maplibre.Map, labels: Placed[]): void {
       if (under.scrollWidth > width - 4 || element.offsetHeight > height) under.style.display = 'none';
     }
     const { x, y } = map.project(at);
+    // A single long word sticks out of its box: what counts is what is drawn.
+    const drawnWidth = Math.max(element.offsetWidth, element.scrollWidth);
     const box = {
-      left: x - element.offsetWidth / 2,
-      right: x + element.offsetWidth / 2,
+      left: x - drawnWidth / 2,
+      right: x + drawnWidth / 2,
       top: y - element.offsetHeight / 2,
       bottom: y + element.offsetHeight / 2,
     };

@@ -16,7 +16,7 @@ import { FIELD_LAYERS, type FieldLayer } from '../view';
 import { pickColours } from './factor-colours';
 
 /** Room above for the layers and their key, and around for the neighbours. */
-const FIT_PADDING = { top: 132, right: 56, bottom: 48, left: 56 };
+const FIT_PADDING = { top: 150, right: 56, bottom: 48, left: 56 };
 
 /** Dry to wet. */
 const DRAINAGE_COLOURS: Record<DrainageClass, string> = {
@@ -86,7 +86,8 @@ export function FieldMap({
       id: one.id,
       geometry: one.boundary,
       fill: layer === 'picks' && one.pickCode ? colours.get(one.pickCode) : '#efe8d6',
-      fillOpacity: one.id === field.id && (layer === 'ph' || layer === 'survey') ? 0.001 : one.id === field.id ? 1 : 0.75,
+      // What lies over the field itself must not be tinted by it.
+      fillOpacity: one.id !== field.id ? 0.75 : (layer === 'ph' && surface) || layer === 'survey' ? 0.001 : 1,
       label: one.id === field.id && layer !== 'picks' ? undefined : one.name,
       sublabel: one.pickCode ? `${one.pickCode} · ${formatBushels(one.expected)}` : `${formatAcres(one.areaAcres)} ac`,
     }));
@@ -110,7 +111,7 @@ export function FieldMap({
       );
     }
     return around;
-  }, [neighbours, layer, colours, field.id, mapUnits, unitColours, statedDrainage]);
+  }, [neighbours, layer, colours, field.id, mapUnits, unitColours, statedDrainage, surface]);
 
   const points = useMemo(
     () =>

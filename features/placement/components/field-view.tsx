@@ -13,6 +13,7 @@ import { CAUTIONS } from '@/lib/ui/cautions';
 import { Caution, Notice, Panel } from '@/lib/ui/page';
 import type { DrainageClass, FieldProfile, PlacementRules, Ranking, SeasonContext, VarietyProfile } from '../engine/model';
 import { rank } from '../engine/rank';
+import { siteOf } from '../engine/site';
 import { type WhatIf, withFacts } from '../engine/what-if';
 import type { FieldLayer } from '../view';
 import { FieldMap, type Neighbour } from './field-map';
@@ -80,7 +81,9 @@ export function FieldView(props: FieldViewProps) {
     () => (changed && stored ? new Map(stored.picks.map((pick) => [pick.varietyId, pick.expected])) : null),
     [changed, stored],
   );
-  const plantingDate = { ...usual, ...settled }.plantingDate ?? `${season.year}-05-10`;
+  // The day the engine takes where none is known, so that chart and ledger speak of the same season.
+  const assumedDate = useMemo(() => siteOf(profile, season, rules).plantingDate, [profile, season, rules]);
+  const plantingDate = { ...usual, ...settled }.plantingDate ?? assumedDate;
 
   function chooseLayer(next: FieldLayer) {
     setLayer(next);
@@ -189,6 +192,7 @@ export function FieldView(props: FieldViewProps) {
               <div id="what-if-box" className={asking || changed ? 'mb-3' : 'hidden'}>
                 <WhatIfBox
                   season={season.year}
+                  assumedDate={assumedDate}
                   facts={{ ...usual, ...changes }}
                   usual={usual}
                   changed={changed}

@@ -32,11 +32,14 @@ export function SeasonChart({
   picks,
   season,
   plantingDate,
+  isAssumed = false,
   tableOpen = false,
 }: {
   picks: { code: string; relativeMaturity: number }[];
   season: SeasonContext;
   plantingDate: string;
+  /** No planting date is known: the day is the engine's own. */
+  isAssumed?: boolean;
   /** Show the dates at once, where there is room for them. */
   tableOpen?: boolean;
 }) {
@@ -52,8 +55,8 @@ export function SeasonChart({
       <h2 id="season-line" className="text-[1.1em]">
         Season line{' '}
         <span className="font-normal font-sans text-mute text-[0.85em]">
-          planted {formatDay(plantingDate)} ·{' '}
-          {season.climate.source === 'normals' ? '30-year normals' : `weather of ${season.year}`}
+          planted {formatDay(plantingDate)}
+          {isAssumed ? ', assumed' : ''} · {season.climate.source === 'normals' ? '30-year normals' : `weather of ${season.year}`}
           {nearest ? `, nearest station ${nearest.name}, ${Math.round(nearest.distanceMiles)} mi` : ''}
         </span>
       </h2>

@@ -10,6 +10,7 @@ const ROW_WIDTHS = [7.5, 10, 15, 20, 30, 36, 38];
 /** The facts a person turns over on the field page; the picks follow at once, and nothing is kept. */
 export function WhatIfBox({
   season,
+  assumedDate,
   facts,
   usual,
   changed,
@@ -17,6 +18,8 @@ export function WhatIfBox({
   onReset,
 }: {
   season: number;
+  /** The day taken where none is known. */
+  assumedDate: string;
   facts: Required<WhatIf>;
   /** What stands in the facts, for showing what was changed. */
   usual: Required<WhatIf>;
@@ -24,7 +27,7 @@ export function WhatIfBox({
   onChange: (facts: WhatIf) => void;
   onReset: () => void;
 }) {
-  const date = facts.plantingDate ?? `${season}-05-10`;
+  const date = facts.plantingDate ?? assumedDate;
   const first = Date.parse(`${season}-04-10`);
   const dayNumber = Math.round((Date.parse(date) - first) / 86_400_000);
   return (
@@ -50,7 +53,8 @@ export function WhatIfBox({
       <div className="mt-2 grid gap-3 sm:grid-cols-3">
         <label className="block">
           <span className="font-semibold">
-            Planted {facts.plantingDate ? formatDay(facts.plantingDate) : '(unknown)'}
+            Planted {formatDay(date)}
+            {facts.plantingDate ? '' : ' (assumed)'}
             {usual.plantingDate !== facts.plantingDate && usual.plantingDate ? (
               <span className="font-normal text-mute"> was {formatDay(usual.plantingDate)}</span>
             ) : null}
