@@ -101,7 +101,13 @@ export function FieldView(props: FieldViewProps) {
   const first = ranking?.picks[0];
   const seasonChart =
     ranking && ranking.picks.length > 0 ? (
-      <SeasonChart picks={ranking.picks.slice(0, 3)} season={season} plantingDate={plantingDate} tableOpen={tab === 'season'} />
+      <SeasonChart
+        picks={ranking.picks.slice(0, 3)}
+        season={season}
+        plantingDate={plantingDate}
+        isAssumed={{ ...usual, ...settled }.plantingDate === null}
+        tableOpen={tab === 'season'}
+      />
     ) : null;
 
   return (
