@@ -1,9 +1,10 @@
 import type { Geometry } from 'geojson';
 import proj4 from 'proj4';
-import { parseDbf, parseShp } from 'shpjs';
+import { parseShp } from 'shpjs';
 import { isZip, type NamedBytes, unpack } from '@/lib/archive';
 import { bad, good, type Outcome } from '@/lib/errors';
 import { definitionOf, guessCrs } from './crs';
+import { dbfRows } from './dbf-table';
 import { type BoundaryReader, extensionOf, overLimits, type RawLayer, type ReadOptions, stemOf } from './reader';
 import { shapeRecords } from './shape-records';
 
@@ -137,11 +138,8 @@ export function attributesOf(
     notes.push(`"${name}" has no .dbf file, so its shapes have no names.`);
     return [];
   }
-  try {
-    const encoding = cpg ? new TextDecoder().decode(cpg).trim() : undefined;
-    return parseDbf(new DataView(dbf.buffer, dbf.byteOffset, dbf.byteLength), encoding);
-  } catch {
-    notes.push(`The .dbf file of "${name}" could not be read, so its shapes have no names.`);
-    return [];
-  }
+  const rows = dbfRows(dbf, cpg ? new TextDecoder().decode(cpg).trim() : undefined);
+  if (rows) return rows;
+  notes.push(`The .dbf file of "${name}" could not be read, so its shapes have no names.`);
+  return [];
 }
