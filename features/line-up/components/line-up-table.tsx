@@ -91,7 +91,7 @@ export function LineUpTable({ varieties, seesSupply }: { varieties: LineUpVariet
 
   return (
     <div>
-      <div className="mb-4 flex flex-wrap items-end gap-3">
+      <div className="mb-4 grid grid-cols-2 items-end gap-3 sm:flex sm:flex-wrap [&_input]:max-sm:w-full [&_select]:max-sm:w-full">
         <Filter label="Search">
           <input
             className="min-h-11 border border-ink/40 bg-white px-3 lg:min-h-9"
@@ -127,11 +127,12 @@ export function LineUpTable({ varieties, seesSupply }: { varieties: LineUpVariet
         <Filter label="Release">
           <Choice value={release} choices={RELEASES} onChange={(value) => choose({ release: value })} />
         </Filter>
-        <p className="ml-auto text-mute">
+        <p className="col-span-2 text-mute sm:ml-auto">
           {shown.length} of {varieties.length} varieties · ratings 1–9, <b>9 is best</b>, — not rated
         </p>
       </div>
-      <Table caption="The line-up">
+      <VarietyCards varieties={table.getRowModel().rows.map((row) => row.original)} />
+      <Table caption="The line-up" className="max-sm:hidden">
         <thead>
           <tr>
             {table.getHeaderGroups()[0]?.headers.map((header) => (
@@ -189,6 +190,35 @@ export function LineUpTable({ varieties, seesSupply }: { varieties: LineUpVariet
       </Table>
       {shown.length === 0 ? <p className="py-6 text-center text-mute">No variety fits these choices.</p> : null}
     </div>
+  );
+}
+
+/** The same on a phone: one card a variety, the traits that tell types apart. */
+function VarietyCards({ varieties }: { varieties: LineUpVariety[] }) {
+  return (
+    <ul className="border-ink border-t-2 bg-white sm:hidden">
+      {varieties.map((variety) => (
+        <li key={variety.id} className="relative border-line border-b px-4 py-3 focus-within:bg-bloom-light">
+          <p className="flex items-baseline justify-between gap-3">
+            <Link href={`/line-up/${variety.id}`} className="font-display font-bold text-[1.1em] after:absolute after:inset-0">
+              {variety.code}
+            </Link>
+            <span className="font-bold">RM {variety.relativeMaturity.toFixed(1)}</span>
+          </p>
+          <p className="text-mute">
+            {[variety.bushType, variety.height, variety.standability === null ? null : `stands ${variety.standability} of 9`]
+              .filter(Boolean)
+              .join(' · ')}
+          </p>
+          <p className="text-mute">{variety.tolerances.join(', ') || 'conventional'}</p>
+          <p className="mt-1 flex flex-wrap gap-2">
+            <Tag kind={SUPPLY_KIND[variety.supplyWord]}>{variety.supplyWord}</Tag>
+            {variety.release === 'full' ? null : <Tag kind="attention">{variety.release} release</Tag>}
+            {variety.published ? null : <Tag>draft</Tag>}
+          </p>
+        </li>
+      ))}
+    </ul>
   );
 }
 
