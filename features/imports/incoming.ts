@@ -2,12 +2,12 @@ import 'server-only';
 import { Readable } from 'node:stream';
 import type { ReadableStream as NodeReadableStream } from 'node:stream/web';
 import busboy from 'busboy';
-import type { IncomingFile } from './machine';
+import { BrokenUpload, type IncomingFile } from './machine';
 import { LARGEST_UPLOAD_BYTES, MOST_FILES } from './model';
 
 /**
- * The files of a multipart request, one after another as they stream in; never held whole. Throws when the body is not a
- * form or ends early.
+ * The files of a multipart request, one after another as they stream in; never held whole. Throws BrokenUpload when the body is
+ * not a form or ends early.
  */
 export async function* incomingFiles(request: Request): AsyncGenerator<IncomingFile> {
   if (!request.body) return;
@@ -22,7 +22,7 @@ export async function* incomingFiles(request: Request): AsyncGenerator<IncomingF
     waiting.push(item);
     wake();
   };
-  parser.on('file', (_field, stream, info) => push({ name: info.filename ?? 'file', stream }));
+  parser.on('file', (_field, stream, info) => push({ name: info.filename ?? 'file', stream: guarded(stream) }));
   parser.on('close', () => push(null));
   parser.on('error', (error) => push(error instanceof Error ? error : new Error('The form could not be read.')));
   const source = Readable.fromWeb(request.body as unknown as NodeReadableStream);
@@ -36,7 +36,16 @@ export async function* incomingFiles(request: Request): AsyncGenerator<IncomingF
     }
     const item = waiting.shift();
     if (item === null || item === undefined) return;
-    if (item instanceof Error) throw item;
+    if (item instanceof Error) throw new BrokenUpload(item.message);
     yield item;
+  }
+}
+
+/** The same bytes; a stream that breaks off says so as a broken upload. */
+async function* guarded(stream: AsyncIterable<Uint8Array>): AsyncGenerator<Uint8Array> {
+  try {
+    yield* stream;
+  } catch (error) {
+    throw new BrokenUpload(error instanceof Error ? error.message : 'broken off');
   }
 }

@@ -56,6 +56,11 @@ function inScope(viewer: Viewer): SQL | undefined {
   );
 }
 
+/** The sender's bytes broke off or were no form: expected on a farm's connection, so it ends in words. */
+export class BrokenUpload extends Error {
+  override name = 'BrokenUpload';
+}
+
 /** An incoming file: its name and its bytes as they arrive. */
 export interface IncomingFile {
   name: string;
@@ -93,35 +98,41 @@ export async function receiveUpload(
   };
   let total = 0;
   let ordinal = 0;
-  for await (const file of files) {
-    if (ordinal >= MOST_FILES) return refuse(`At most ${MOST_FILES} files at a time. Nothing was kept. Zip them into one.`);
-    const fileId = createId();
-    await database()
-      .insert(uploadFiles)
-      .values({ id: fileId, uploadId, ordinal, name: cleanName(file.name), sizeBytes: 0, sha256: '' });
-    ordinal += 1;
-    const hash = createHash('sha256');
-    let size = 0;
-    let chunk = 0;
-    for await (const piece of pieces(file.stream)) {
-      size += piece.byteLength;
-      total += piece.byteLength;
-      if (total > LARGEST_UPLOAD_BYTES)
-        return refuse(
-          `The upload is larger than ${LARGEST_UPLOAD_BYTES / 1_000_000} MB. Nothing was kept. Split it, or zip only the layers you need.`,
-        );
-      hash.update(piece);
-      const packed = gzipSync(piece, { level: 1 });
-      const compressed = packed.byteLength < piece.byteLength * 0.95;
+  try {
+    for await (const file of files) {
+      if (ordinal >= MOST_FILES) return refuse(`At most ${MOST_FILES} files at a time. Nothing was kept. Zip them into one.`);
+      const fileId = createId();
       await database()
-        .insert(uploadChunks)
-        .values({ fileId, ordinal: chunk, compressed, bytes: compressed ? packed : piece });
-      chunk += 1;
+        .insert(uploadFiles)
+        .values({ id: fileId, uploadId, ordinal, name: cleanName(file.name), sizeBytes: 0, sha256: '' });
+      ordinal += 1;
+      const hash = createHash('sha256');
+      let size = 0;
+      let chunk = 0;
+      for await (const piece of pieces(file.stream)) {
+        size += piece.byteLength;
+        total += piece.byteLength;
+        if (total > LARGEST_UPLOAD_BYTES)
+          return refuse(
+            `The upload is larger than ${LARGEST_UPLOAD_BYTES / 1_000_000} MB. Nothing was kept. Split it, or zip only the layers you need.`,
+          );
+        hash.update(piece);
+        const packed = gzipSync(piece, { level: 1 });
+        const compressed = packed.byteLength < piece.byteLength * 0.95;
+        await database()
+          .insert(uploadChunks)
+          .values({ fileId, ordinal: chunk, compressed, bytes: compressed ? packed : piece });
+        chunk += 1;
+      }
+      await database()
+        .update(uploadFiles)
+        .set({ sizeBytes: size, sha256: hash.digest('hex') })
+        .where(eq(uploadFiles.id, fileId));
     }
-    await database()
-      .update(uploadFiles)
-      .set({ sizeBytes: size, sha256: hash.digest('hex') })
-      .where(eq(uploadFiles.id, fileId));
+  } catch (error) {
+    // The row stays, failed and saying so, for when the person comes back.
+    if (error instanceof BrokenUpload) return bad(CUT_OFF);
+    throw error;
   }
   if (ordinal === 0) return refuse('No file was chosen.');
   if (total === 0) return refuse('The file is empty. Nothing was kept. Choose the file again.');

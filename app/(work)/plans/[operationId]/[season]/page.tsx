@@ -24,6 +24,7 @@ import { ExportMenu } from '@/features/plans/components/export-menu';
 import { PlanBoard } from '@/features/plans/components/plan-board';
 import { PlanHistory } from '@/features/plans/components/plan-history';
 import { PlanSteps } from '@/features/plans/components/plan-steps';
+import { PlanWatch } from '@/features/plans/components/plan-watch';
 import { SolverPanel } from '@/features/plans/components/solver-panel';
 import { StateTag } from '@/features/plans/components/state-tag';
 import { planOf, sheetLinksOf } from '@/features/plans/queries';
@@ -106,6 +107,7 @@ export default async function PlanPage({ params }: Props) {
         }
       />
       <div className="flex flex-col gap-6">
+        {editable ? null : <PlanWatch operationId={operationId} season={season} revision={view.revision} />}
         {view.signedName ? (
           <Notice kind="good">
             Agreed by {view.signedName}, {formatMoment(view.signedAt)}. The plan and its ledgers are frozen as agreed.
