@@ -4,6 +4,7 @@ import { database } from '@/db/client';
 import { fields, soilMapUnits, soilSamples } from '@/db/schema';
 import type { Viewer } from '@/features/accounts/model';
 import { operationIdInScope } from '@/features/accounts/scope';
+import { type SoilYear, soilHistory } from './history';
 import type { SoilMapUnit, SoilSample } from './model';
 
 const { createdAt: _sampleMade, ...SAMPLE_COLUMNS } = getTableColumns(soilSamples);
@@ -45,4 +46,10 @@ export async function mapUnitsOfOperation(viewer: Viewer, operationId: string): 
     .innerJoin(fields, eq(fields.id, soilMapUnits.fieldId))
     .where(and(eq(fields.operationId, operationId), isNull(fields.archivedAt), operationIdInScope(viewer, fields.operationId)));
   return rows.sort((one, other) => other.share - one.share);
+}
+
+/** A field's soil tests year by year, newest first: mean and range of pH, OM, CEC, P, K, buffer, carbonate, EC and cyst eggs. */
+export async function soilSummaryOf(viewer: Viewer, fieldId: string): Promise<{ latest: SoilYear | null; years: SoilYear[] }> {
+  const years = soilHistory(await samplesOfField(viewer, fieldId));
+  return { latest: years[0] ?? null, years };
 }

@@ -88,30 +88,58 @@ export function surveyArea(units: SurveyUnitToWrite[], area = 'IA081'): Uint8Arr
   const folder = `${area}/`;
   const table = (rows: string[]) => Buffer.from(rows.map((row) => `${row}\r\n`).join(''));
   return zipOf([
-    { name: `${folder}spatial/soilmu_a_${area.toLowerCase()}.shp`, bytes: shpOf(units.map((unit) => ({ geometry: unit.outline, attributes: {} })), WGS84_PRJ) },
+    {
+      name: `${folder}spatial/soilmu_a_${area.toLowerCase()}.shp`,
+      bytes: shpOf(
+        units.map((unit) => ({ geometry: unit.outline, attributes: {} })),
+        WGS84_PRJ,
+      ),
+    },
     {
       name: `${folder}spatial/soilmu_a_${area.toLowerCase()}.dbf`,
       bytes: dbfOf(units.map((unit) => ({ AREASYMBOL: area, SPATIALVER: '1', MUSYM: unit.symbol, MUKEY: unit.key }))),
     },
     { name: `${folder}spatial/soilmu_a_${area.toLowerCase()}.prj`, bytes: Buffer.from(WGS84_PRJ) },
-    { name: `${folder}tabular/mapunit.txt`, bytes: table(units.map((unit) => barred(24, { 0: unit.symbol, 1: unit.name, 23: unit.key }))) },
+    {
+      name: `${folder}tabular/mapunit.txt`,
+      bytes: table(units.map((unit) => barred(24, { 0: unit.symbol, 1: unit.name, 23: unit.key }))),
+    },
     {
       name: `${folder}tabular/muaggatt.txt`,
       bytes: table(
         units.map((unit) =>
-          barred(40, { 0: unit.symbol, 1: unit.name, 3: 2, 4: unit.slope ?? 1.5, 8: 'None', 13: unit.waterCm ?? 20.32, 15: unit.drainage, 17: 'B/D', 39: unit.key }),
+          barred(40, {
+            0: unit.symbol,
+            1: unit.name,
+            3: 2,
+            4: unit.slope ?? 1.5,
+            8: 'None',
+            13: unit.waterCm ?? 20.32,
+            15: unit.drainage,
+            17: 'B/D',
+            39: unit.key,
+          }),
         ),
       ),
     },
     {
       name: `${folder}tabular/comp.txt`,
-      bytes: table(units.map((unit) => barred(109, { 1: 85, 3: unit.name, 5: 'Yes', 9: 2, 23: unit.drainage, 107: unit.key, 108: `c${unit.key}` }))),
+      bytes: table(
+        units.map((unit) =>
+          barred(109, { 1: 85, 3: unit.name, 5: 'Yes', 9: 2, 23: unit.drainage, 107: unit.key, 108: `c${unit.key}` }),
+        ),
+      ),
     },
     {
       name: `${folder}tabular/chorizon.txt`,
       bytes: table(
         units.flatMap((unit) =>
-          (unit.horizons ?? [[0, 20, 6, 0], [20, 50, 7, 5]]).map(([top, bottom, ph, carbonate], at) =>
+          (
+            unit.horizons ?? [
+              [0, 20, 6, 0],
+              [20, 50, 7, 5],
+            ]
+          ).map(([top, bottom, ph, carbonate], at) =>
             barred(171, { 0: 'Ap', 6: top, 9: bottom, 114: carbonate, 135: ph, 169: `c${unit.key}`, 170: `h${unit.key}${at}` }),
           ),
         ),

@@ -13,7 +13,8 @@ export function dbfRows(file: Uint8Array, encoding?: string): Record<string, unk
   const [rows, headerLength, rowLength] = [header.getUint32(4, true), header.getUint16(8, true), header.getUint16(10, true)];
   if (rowLength < 2 || rowLength > LONGEST_ROW || headerLength < 65 || headerLength >= file.byteLength) return null;
   const whole = Math.min(rows, Math.floor((file.byteLength - headerLength) / rowLength));
-  const copy = file.slice();
+  // A Buffer's slice shares its memory with the pool; this is a copy of its own.
+  const copy = new Uint8Array(file);
   new DataView(copy.buffer).setUint32(4, whole, true);
   try {
     return parseDbf(new DataView(copy.buffer), encoding);

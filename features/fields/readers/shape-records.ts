@@ -73,7 +73,7 @@ export function shapeRecords(file: Uint8Array, name: string, accept: ReadonlySet
     );
   }
   // The header's length is what parsers trust, so it must be the length that was walked.
-  const bytes = file.slice(0, offset);
+  const bytes = new Uint8Array(file.subarray(0, offset));
   new DataView(bytes.buffer).setInt32(24, offset / 2);
   return good({ bytes, count, vertexCount, example, notes });
 }

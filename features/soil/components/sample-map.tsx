@@ -40,7 +40,7 @@ export function SampleMap({
       longitude: sample.longitude as number,
       latitude: sample.latitude as number,
       color: sample.ph === null ? NO_PH : phClass(sample.ph).color,
-      label: placed.length <= 150 ? sample.ph?.toFixed(1) : undefined,
+      label: placed.length <= 60 ? sample.ph?.toFixed(1) : undefined,
     }));
   }, [samples]);
   if (points.length === 0) return null;

@@ -85,8 +85,14 @@ export function joinTables(tables: JoinedTable[]): { samples: ReadSample[]; note
   });
   const alone = points.filter((point) => !met.has(point)).map((point) => point.id ?? `point ${point.row}`);
   notes.push(`${joined} of ${samples.length} results met their point by sample number (${names}).`);
-  if (lost.length > 0) problems.push(`${lost.length} results met no point and have no place: sample ${list(lost)}.`);
-  if (alone.length > 0) problems.push(`${alone.length} points met no result and were left out: sample ${list(alone)}.`);
+  if (lost.length > 0)
+    problems.push(
+      `${lost.length === 1 ? 'One result' : `${lost.length} results`} met no point and ${lost.length === 1 ? 'has' : 'have'} no place: sample ${list(lost)}.`,
+    );
+  if (alone.length > 0)
+    problems.push(
+      `${alone.length === 1 ? 'One point' : `${alone.length} points`} met no result and ${alone.length === 1 ? 'was' : 'were'} left out: sample ${list(alone)}.`,
+    );
   if (doubtful.length > 0)
     problems.push(
       `${doubtful.length} sample numbers stand at several points, so their place is not known: sample ${list([...new Set(doubtful)])}.`,

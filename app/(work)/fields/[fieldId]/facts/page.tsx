@@ -6,6 +6,8 @@ import { FactsForm } from '@/features/fields/components/facts-form';
 import { FieldNameForm } from '@/features/fields/components/field-name-form';
 import { factsOf, fieldOf, fieldsOf } from '@/features/fields/queries';
 import { farmsOf, operationOf } from '@/features/growers/queries';
+import { SoilHistory } from '@/features/soil/components/soil-history';
+import { soilSummaryOf } from '@/features/soil/queries';
 import { formatAcres } from '@/lib/format';
 import { found } from '@/lib/found';
 import { Page, PageHeader } from '@/lib/ui/page';
@@ -15,11 +17,12 @@ export const metadata: Metadata = { title: 'Facts of a field' };
 export default async function FactsPage({ params }: { params: Promise<{ fieldId: string }> }) {
   const viewer = await requireViewer();
   const field = await found(fieldOf(viewer, (await params).fieldId));
-  const [facts, all, operation, farms] = await Promise.all([
+  const [facts, all, operation, farms, soil] = await Promise.all([
     factsOf(viewer, field.id, viewer.season),
     fieldsOf(viewer, field.operationId),
     operationOf(viewer, field.operationId),
     farmsOf(viewer, field.operationId),
+    soilSummaryOf(viewer, field.id),
   ]);
   return (
     <Page>
@@ -36,6 +39,9 @@ export default async function FactsPage({ params }: { params: Promise<{ fieldId:
         }
       />
       <FactsForm key={field.id} fieldId={field.id} season={viewer.season} facts={facts} save={saveFacts} />
+      <div className="mt-8">
+        <SoilHistory years={soil.years} />
+      </div>
       <CopyFacts
         fieldId={field.id}
         season={viewer.season}
