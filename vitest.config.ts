@@ -19,7 +19,7 @@ function project(name: string, options: { database?: boolean; timeoutSeconds?: n
       environment: 'node',
       testTimeout: (options.timeoutSeconds ?? 20) * 1000,
       hookTimeout: 60_000,
-      setupFiles: options.database ? ['tests/support/database.ts'] : [],
+      setupFiles: ['tests/support/seeded-properties.ts', ...(options.database ? ['tests/support/database.ts'] : [])],
       globalSetup: options.database ? ['tests/support/prepare-database.ts'] : [],
     },
   };

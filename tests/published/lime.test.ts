@@ -70,7 +70,8 @@ describe('lime rates', () => {
         fc.double({ min: 6, max: 6.8, noNaN: true }),
         (buffer, target) => {
           expect(triStateTons(10 * buffer - 1, target)).toBeGreaterThanOrEqual(triStateTons(10 * buffer, target));
-          expect(triStateTons(10 * buffer, target + 0.05)).toBeGreaterThanOrEqual(triStateTons(10 * buffer, target) - 1e-9);
+          // The three printed lines cross near index 69, where rates are small: there a higher target may ask for a hair less.
+          expect(triStateTons(10 * buffer, target + 0.05)).toBeGreaterThanOrEqual(triStateTons(10 * buffer, target) - 0.02);
         },
       ),
     );
