@@ -47,6 +47,8 @@ export function decodeText(bytes: Uint8Array): { text: string; encoding: string 
 export function delimiterOf(text: string): string {
   const lines = text
     .slice(0, 200_000)
+    // A quoted cell may hold line ends and every sign: it is set aside whole before lines are counted.
+    .replace(/(^|[\t;|,\r\n])"(?:[^"]|"")*"(?=[\t;|,\r\n]|$)/g, '$1')
     .split(/\r\n|\r|\n/)
     .filter((line) => line.trim() !== '')
     .slice(0, 60)

@@ -66,3 +66,21 @@ export const seedLots = sqliteTable(
   },
   (table) => [uniqueIndex('seed_lot_number').on(table.varietyId, table.lotNumber), index('seed_lot_variety').on(table.varietyId)],
 );
+
+/** What an import of a line-up did to one variety or lot, so that it can be taken back whole. */
+export const lineUpImportEntries = sqliteTable(
+  'line_up_import_entry',
+  {
+    id: text('id').primaryKey(),
+    uploadId: text('upload_id')
+      .notNull()
+      .references(() => uploads.id, { onDelete: 'cascade' }),
+    thing: text('thing', { enum: ['variety', 'lot'] }).notNull(),
+    thingId: text('thing_id').notNull(),
+    /** The columns it changed, as they were; `null` when it added the thing. */
+    before: text('before', { mode: 'json' }).$type<Record<string, unknown>>(),
+    /** The variety's revision, or the lot's moment of change, that the import left: another one means somebody changed it since. */
+    mark: integer('mark').notNull(),
+  },
+  (table) => [index('line_up_import_entry_upload').on(table.uploadId)],
+);

@@ -7,6 +7,7 @@ import type { Outcome } from '@/lib/errors';
 import * as changes from './changes';
 import * as imports from './import-changes';
 import type { LineUpInspection } from './import-model';
+import * as undoing from './import-undo';
 
 function renew<Value>(outcome: Value): Value {
   revalidatePath('/line-up', 'layout');
@@ -47,7 +48,7 @@ export async function keepLineUp(input: unknown): ReturnType<typeof imports.keep
 }
 
 export async function undoLineUp(uploadId: string): Promise<Outcome<null>> {
-  return renew(await imports.undoLineUp(await requireViewer(), { uploadId }));
+  return renew(await undoing.undoLineUp(await requireViewer(), { uploadId }));
 }
 
 export async function discardLineUp(uploadId: string): Promise<Outcome<null>> {

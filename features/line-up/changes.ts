@@ -1,12 +1,13 @@
 import 'server-only';
-import { and, eq, isNull, ne } from 'drizzle-orm';
+import { and, eq, isNull, ne, sql } from 'drizzle-orm';
 import type { Transaction } from '@/db/client';
 import { seedLots, varieties } from '@/db/schema';
 import { change } from '@/features/accounts/gate';
 import type { Viewer } from '@/features/accounts/model';
 import { bad, good, NotFoundError, type Outcome } from '@/lib/errors';
 import { createId } from '@/lib/ids';
-import { COLUMNS, formatCell } from './columns';
+import { formatCell } from './cells';
+import { COLUMNS } from './columns';
 import { lotIdSchema, lotSchema, publishSchema, updateVarietySchema, varietyIdSchema, varietySchema } from './schemas';
 
 type VarietyRow = typeof varieties.$inferSelect;
@@ -28,7 +29,8 @@ async function codeTaken(transaction: Transaction, viewer: Viewer, season: numbe
       and(
         eq(varieties.dealershipId, viewer.dealershipId),
         eq(varieties.season, season),
-        eq(varieties.code, code),
+        // Whatever its case: an import finds a variety by its code that way.
+        sql`lower(${varieties.code}) = ${code.toLowerCase()}`,
         ne(varieties.id, except),
       ),
     );
@@ -142,7 +144,7 @@ export async function archiveVariety(viewer: Viewer, input: unknown): Promise<Ou
       // The code is freed for a new variety; the old row keeps its name for the plans that have it.
       await transaction
         .update(varieties)
-        .set({ archivedAt: Date.now(), published: false, code: `${before.code} (out ${new Date().toISOString().slice(0, 16)})` })
+        .set({ archivedAt: Date.now(), published: false, code: `${before.code} (out ${new Date().toISOString()})` })
         .where(eq(varieties.id, varietyId));
       return {
         ...good(null),
@@ -163,26 +165,40 @@ export async function saveLot(viewer: Viewer, input: unknown): Promise<Outcome<{
     right: ['supply', 'change'],
     schema: lotSchema,
     input,
-    run: async (transaction, { lotId, varietyId, priceDollarsPerUnit, ...form }) => {
+    run: async (transaction, { lotId, varietyId, updatedAt, priceDollarsPerUnit, ...form }) => {
       const variety = await requireVariety(transaction, viewer, varietyId);
       const values = {
         ...form,
         priceCentsPerUnit: priceDollarsPerUnit === null ? null : Math.round(priceDollarsPerUnit * 100),
         updatedAt: Date.now(),
       };
-      const taken = await transaction
-        .select({ id: seedLots.id })
+      const [namesake] = await transaction
+        .select()
         .from(seedLots)
         .where(and(eq(seedLots.varietyId, varietyId), eq(seedLots.lotNumber, form.lotNumber), ne(seedLots.id, lotId ?? '')));
-      if (taken.length > 0) return bad(`${variety.code} has a lot ${form.lotNumber} already.`, 'lotNumber');
-      const id = lotId || createId();
+      if (namesake && (namesake.archivedAt === null || lotId))
+        return bad(
+          `${variety.code} ${namesake.archivedAt === null ? 'has a lot' : 'had a lot'} ${form.lotNumber} already.`,
+          'lotNumber',
+        );
+      const id = lotId ?? namesake?.id ?? createId();
       if (lotId) {
-        const [row] = await transaction
+        const [before] = await transaction
+          .select()
+          .from(seedLots)
+          .where(and(eq(seedLots.id, lotId), eq(seedLots.varietyId, varietyId), isNull(seedLots.archivedAt)));
+        if (!before) throw new NotFoundError('No such lot.');
+        if (updatedAt !== undefined && before.updatedAt !== updatedAt)
+          return bad(
+            `Somebody changed lot ${before.lotNumber} while you had it open: it has ${before.unitsOnHand} units now. Your form was not kept. Open the page again and repeat what is still right.`,
+          );
+        await transaction.update(seedLots).set(values).where(eq(seedLots.id, lotId));
+      } else if (namesake) {
+        // The number of a lot that was taken out: the same lot comes back, with what the form says.
+        await transaction
           .update(seedLots)
-          .set(values)
-          .where(and(eq(seedLots.id, lotId), eq(seedLots.varietyId, varietyId)))
-          .returning();
-        if (!row) throw new NotFoundError('No such lot.');
+          .set({ ...values, archivedAt: null })
+          .where(eq(seedLots.id, namesake.id));
       } else {
         await transaction.insert(seedLots).values({ id, varietyId, ...values });
       }
@@ -206,10 +222,13 @@ export async function archiveLot(viewer: Viewer, input: unknown): Promise<Outcom
     schema: lotIdSchema,
     input,
     run: async (transaction, { lotId }) => {
-      const [lot] = await transaction.select().from(seedLots).where(eq(seedLots.id, lotId));
+      const [lot] = await transaction
+        .select()
+        .from(seedLots)
+        .where(and(eq(seedLots.id, lotId), isNull(seedLots.archivedAt)));
       if (!lot) throw new NotFoundError('No such lot.');
       const variety = await requireVariety(transaction, viewer, lot.varietyId);
-      await transaction.update(seedLots).set({ archivedAt: Date.now() }).where(eq(seedLots.id, lotId));
+      await transaction.update(seedLots).set({ archivedAt: Date.now(), updatedAt: Date.now() }).where(eq(seedLots.id, lotId));
       return {
         ...good(null),
         audit: {

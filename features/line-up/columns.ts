@@ -1,5 +1,4 @@
 import { BUSH_TYPES, CYST_SOURCES, HEIGHTS, RELEASES, TOLERANCES } from '@/features/placement/engine/model';
-import { bad, good, type Outcome } from '@/lib/errors';
 import type { VarietyTraits } from './model';
 
 /**
@@ -14,7 +13,9 @@ export interface LotColumns {
   seedsPerLb: number | null;
   germination: number | null;
   treatment: string | null;
+  unitSizeSeeds: number | null;
   unitsOnHand: number | null;
+  priceDollarsPerUnit: number | null;
 }
 
 export type RowKey = keyof VarietyTraits | keyof LotColumns;
@@ -30,6 +31,8 @@ export interface Column {
   words?: readonly string[];
   unit?: string;
   range?: readonly [number, number];
+  /** Most characters of a text. */
+  longest?: number;
   /** Header spellings in other people's files, lower-case letters and digits only. */
   aliases: readonly string[];
   /** Belongs to a seed lot, not to the variety. */
@@ -49,6 +52,7 @@ export const COLUMNS: readonly Column[] = [
     label: 'Code',
     short: 'Code',
     kind: 'text',
+    longest: 40,
     aliases: ['variety', 'name', 'varietyname', 'product', 'hybrid', 'brandvariety', 'varietycode'],
   },
   {
@@ -126,6 +130,7 @@ export const COLUMNS: readonly Column[] = [
     label: 'Seed lot',
     short: 'Lot',
     kind: 'text',
+    longest: 60,
     aliases: ['lot', 'seedlot', 'lotno'],
     ofLot: true,
   },
@@ -161,6 +166,17 @@ export const COLUMNS: readonly Column[] = [
     ofLot: true,
   },
   {
+    key: 'unitSizeSeeds',
+    header: 'unitSizeSeeds',
+    label: 'Seeds in a unit',
+    short: 'Unit',
+    kind: 'number',
+    unit: 'seeds',
+    range: [1000, 1_000_000],
+    aliases: ['unitsize', 'seedsperunit', 'seedsunit'],
+    ofLot: true,
+  },
+  {
     key: 'unitsOnHand',
     header: 'unitsOnHand',
     label: 'Units on hand',
@@ -169,6 +185,18 @@ export const COLUMNS: readonly Column[] = [
     unit: 'units',
     range: [0, 1_000_000],
     aliases: ['units', 'supply', 'onhand', 'inventory', 'quantity', 'qty'],
+    ofLot: true,
+    private: true,
+  },
+  {
+    key: 'priceDollarsPerUnit',
+    header: 'priceDollarsPerUnit',
+    label: 'Price a unit',
+    short: 'Price',
+    kind: 'number',
+    unit: '$',
+    range: [0, 1000],
+    aliases: ['price', 'priceperunit', 'unitprice', 'dollarsperunit'],
     ofLot: true,
     private: true,
   },
@@ -187,13 +215,13 @@ export const COLUMNS: readonly Column[] = [
     label: 'Note',
     short: 'Note',
     kind: 'text',
+    longest: 1000,
     aliases: ['notes', 'comment', 'comments', 'remarks'],
   },
 ];
 
-export type Parsed = string | number | string[] | null;
-
-function squeezed(text: string): string {
+/** A word without case, spaces and signs, for comparing spellings. */
+export function squeezed(text: string): string {
   return text.toLowerCase().replace(/[^a-z0-9]/g, '');
 }
 
@@ -202,86 +230,4 @@ export function columnOfHeader(header: string): Column | null {
   const spelled = squeezed(header);
   if (!spelled) return null;
   return COLUMNS.find((column) => squeezed(column.header) === spelled || column.aliases.includes(spelled)) ?? null;
-}
-
-/**
- * Relative maturity as a number: `2.4`, and the early groups as the trade writes them, `00.7` → −0.3, `000.5` → −1.5
- * (MG 00.x → x/10 − 1, MG 000.x → x/10 − 2).
- */
-export function parseRelativeMaturity(text: string): number | null {
-  const written = text.trim();
-  const early = /^(0{2,3})\.?(\d)?$/.exec(written);
-  if (early) return Number((Number(early[2] ?? 0) / 10 - (early[1] === '00' ? 1 : 2)).toFixed(1));
-  if (!/^-?\d{1,2}([.,]\d{1,2})?$/.test(written)) return null;
-  const value = Number(written.replace(',', '.'));
-  return value >= -2 && value <= 10 ? value : null;
-}
-
-const EMPTY = new Set(['', '-', '—', '–', 'n/a', 'na', 'nr', '.']);
-
-/** One cell of a file or form in the column's own terms. An empty cell is unknown (`null`, or an empty list). */
-export function parseCell(column: Column, raw: string): Outcome<Parsed> {
-  const text = raw.trim();
-  const empty = EMPTY.has(text.toLowerCase());
-  switch (column.kind) {
-    case 'text':
-      if (empty) return good(null);
-      return text.length <= 200 ? good(text) : bad(`${column.header}: at most 200 characters.`);
-    case 'maturity': {
-      const value = parseRelativeMaturity(text);
-      return value === null
-        ? bad(`${column.header}: "${text}" is not a maturity. Write a number like 2.4 (or 00.7).`)
-        : good(value);
-    }
-    case 'choice': {
-      if (empty) return good(null);
-      const found = column.words?.find((word) => squeezed(word) === squeezed(text));
-      return found ? good(found) : bad(`${column.header}: "${text}" is not known. Known are: ${column.words?.join(', ')}.`);
-    }
-    case 'genes': {
-      if (empty || /^none$/i.test(text)) return good([]);
-      const genes = text
-        .split(/[;,/+&\s]+/)
-        .filter(Boolean)
-        .map((gene) => gene.replace(/^rps-?/i, '').toLowerCase());
-      const odd = genes.find((gene) => !/^\d{1,2}[a-z]?$/.test(gene));
-      return odd === undefined
-        ? good(genes)
-        : bad(`${column.header}: "${odd}" is not a gene. Write genes like 1k or 3a, with ; between them.`);
-    }
-    case 'list': {
-      if (empty || /^(none|conventional)$/i.test(text)) return good([]);
-      const words: string[] = [];
-      for (const part of text
-        .split(/[;/|+]|,(?!4)(?!\s*4)/)
-        .map((one) => one.trim())
-        .filter(Boolean)) {
-        const found = column.words?.find((word) => squeezed(word) === squeezed(part));
-        if (!found) return bad(`${column.header}: "${part}" is not known. Known are: ${column.words?.join(', ')}.`);
-        if (!words.includes(found)) words.push(found);
-      }
-      return good(words);
-    }
-    default:
-      return empty ? good(null) : parseNumber(column, text);
-  }
-}
-
-function parseNumber(column: Column, text: string): Outcome<Parsed> {
-  const value = Number(text.replace(/[%\s]/g, '').replace(/,(?=\d{3}\b)/g, ''));
-  const [low, high] = column.range ?? [Number.NEGATIVE_INFINITY, Number.POSITIVE_INFINITY];
-  if (!Number.isFinite(value)) return bad(`${column.header}: "${text}" is not a number.`);
-  if (value < low || value > high) {
-    const best = column.kind === 'rating' ? ' (9 is best)' : '';
-    return bad(`${column.header}: ${text} is outside ${low}–${high.toLocaleString('en-US')}${best}.`);
-  }
-  return good(value);
-}
-
-/** A value as the screen and a file write it; lists with ; between. Unknown is empty. */
-export function formatCell(column: Column, value: unknown): string {
-  if (value === null || value === undefined) return '';
-  if (Array.isArray(value)) return value.join(';');
-  if (column.kind === 'maturity') return Number(value).toFixed(1);
-  return String(value);
 }

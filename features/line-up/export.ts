@@ -1,7 +1,8 @@
 import 'server-only';
 import ExcelJS from 'exceljs';
 import { csvLines } from '@/lib/csv';
-import { COLUMNS, type Column, formatCell } from './columns';
+import { formatCell } from './cells';
+import { COLUMNS, type Column } from './columns';
 import type { LineUpVariety, SeedLot } from './model';
 
 export interface ExportRow {
@@ -12,7 +13,9 @@ export interface ExportRow {
 function value({ variety, lot }: ExportRow, column: Column): unknown {
   if (!column.ofLot) return variety[column.key as keyof LineUpVariety];
   if (!lot) return null;
-  return column.key === 'germination' ? lot.germinationPercent : lot[column.key as keyof SeedLot];
+  if (column.key === 'germination') return lot.germinationPercent;
+  if (column.key === 'priceDollarsPerUnit') return lot.priceCentsPerUnit === null ? null : lot.priceCentsPerUnit / 100;
+  return lot[column.key as keyof SeedLot];
 }
 
 function columnsFor(seesSupply: boolean): Column[] {

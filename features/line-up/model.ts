@@ -52,6 +52,8 @@ export interface SeedLot {
   unitsOnHand: number | null;
   /** `null` for growers, and where no price is set. */
   priceCentsPerUnit: number | null;
+  /** Moment of its last change (ms), by which the second of two writers is told. */
+  updatedAt: number;
 }
 
 /** The word growers see for a supply. No lot at all is not sold out: nobody has said yet. */

@@ -79,7 +79,7 @@ export async function lotsOfLineUp(viewer: Viewer, season: number): Promise<Seed
   return [...lots.values()].flat().map((lot) => lotFor(viewer, lot));
 }
 
-function lotFor(viewer: Viewer, { createdAt, updatedAt, archivedAt, ...lot }: LotRow): SeedLot {
+function lotFor(viewer: Viewer, { createdAt, archivedAt, ...lot }: LotRow): SeedLot {
   const seesSupply = may(viewer, 'supply', 'read');
   return {
     ...lot,

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { BUSH_TYPES, CYST_SOURCES, HEIGHTS, RELEASES, TOLERANCES } from '@/features/placement/engine/model';
-import { COLUMNS, parseCell, parseRelativeMaturity } from './columns';
+import { parseCell, parseRelativeMaturity } from './cells';
+import { COLUMNS } from './columns';
 
 const emptyIsNull = (value: unknown) => (value === '' || value === undefined ? null : value);
 
@@ -64,7 +65,9 @@ const optionalNumber = (low: number, high: number, words: string) =>
   z.preprocess(emptyIsNull, z.coerce.number(words).min(low, words).max(high, words).nullable());
 
 export const lotSchema = z.object({
-  lotId: z.string().optional(),
+  lotId: z.string().min(1).optional(),
+  /** The moment of change the form was filled from. */
+  updatedAt: z.number().optional(),
   varietyId: z.string().min(1),
   lotNumber: z.string().trim().min(1, 'Write the lot number from the tag.').max(60, 'Use at most 60 characters.'),
   seedsPerLb: optionalNumber(1200, 6000, 'Seeds per pound lie between 1,200 and 6,000.'),

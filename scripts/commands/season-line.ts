@@ -1,4 +1,4 @@
-import { parseRelativeMaturity } from '@/features/line-up/columns';
+import { parseRelativeMaturity } from '@/features/line-up/cells';
 import { climateFromDailyFile } from '@/features/placement/climate/daily-file';
 import { climateForPlace } from '@/features/placement/climate/place';
 import { seasonLine } from '@/features/placement/climate/season-line';

@@ -1,7 +1,8 @@
 import { beforeAll, describe, expect, test } from 'vitest';
 import { receiveUpload } from '@/features/imports/machine';
 import { archiveLot, archiveVariety, createVariety, saveLot, setPublished, updateVariety } from '@/features/line-up/changes';
-import { inspectLineUp, keepLineUp, undoLineUp } from '@/features/line-up/import-changes';
+import { inspectLineUp, keepLineUp } from '@/features/line-up/import-changes';
+import { undoLineUp } from '@/features/line-up/import-undo';
 import { lineUp, lotsOf, lotsOfLineUp, profilesForPlacement, varietyOf } from '@/features/line-up/queries';
 import { NotFoundError } from '@/lib/errors';
 import { aStoredVariety } from '../support/fields';

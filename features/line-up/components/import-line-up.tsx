@@ -126,8 +126,9 @@ export function ImportLineUp({ actions }: { actions: LineUpImportActions }) {
           onFiles={(files) => void choose(files)}
         >
           <p>
-            CSV or XLSX with a header row; only the code and the maturity are needed. Known varieties are changed by code, new
-            ones added. Nothing is kept until you have seen what would change.
+            CSV or XLSX with a header row; a row a seed lot. A new variety needs its code and maturity, a known one its code.
+            Known varieties are changed by code, new ones added; a sheet of codes, lots and units alone brings the supply up to
+            date. An empty cell leaves what is kept. Nothing is kept until you have seen what would change.
           </p>
         </FileDrop>
       )}
@@ -252,10 +253,7 @@ function Effects({ inspection }: { inspection: LineUpInspection }) {
                   {one.kind === 'same' ? 'as it is' : one.kind}
                 </Tag>
               </Td>
-              <Td>
-                {one.changes.map((change) => `${change.label}: ${change.from} → ${change.to}`).join('; ')}
-                {one.lotWords ? `${one.changes.length > 0 ? '; ' : ''}${one.lotWords}` : ''}
-              </Td>
+              <Td>{one.changes.map((change) => `${change.label}: ${change.from} → ${change.to}`).join('; ')}</Td>
             </tr>
           ))}
         </tbody>

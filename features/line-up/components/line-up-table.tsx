@@ -15,7 +15,8 @@ import { useMemo, useState } from 'react';
 import { RELEASES, TOLERANCES } from '@/features/placement/engine/model';
 import { Tag } from '@/lib/ui/page';
 import { Table, Td, Th } from '@/lib/ui/table';
-import { COLUMNS, formatCell } from '../columns';
+import { formatCell } from '../cells';
+import { COLUMNS } from '../columns';
 import type { LineUpVariety, SupplyWord } from '../model';
 
 const helper = createColumnHelper<LineUpVariety>();

@@ -146,7 +146,7 @@ function LotForm({
       noValidate
       onSubmit={(event) => {
         event.preventDefault();
-        run(() => actions.save({ ...values, varietyId, ...(lot ? { lotId: lot.id } : {}) }));
+        run(() => actions.save({ ...values, varietyId, ...(lot ? { lotId: lot.id, updatedAt: lot.updatedAt } : {}) }));
       }}
     >
       <h3 className="mb-3 text-lg">{lot ? `Lot ${lot.lotNumber}` : 'A new lot'}</h3>

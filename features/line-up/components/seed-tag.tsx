@@ -1,4 +1,5 @@
-import { COLUMNS, formatCell } from '../columns';
+import { formatCell } from '../cells';
+import { COLUMNS } from '../columns';
 import type { LineUpVariety } from '../model';
 
 const RATED = COLUMNS.filter((column) => column.kind === 'rating');

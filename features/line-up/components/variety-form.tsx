@@ -8,7 +8,8 @@ import type { Outcome } from '@/lib/errors';
 import { Button } from '@/lib/ui/button';
 import { CheckField, SelectField, TextAreaField, TextField } from '@/lib/ui/form';
 import { Notice } from '@/lib/ui/page';
-import { COLUMNS, type Column, formatCell } from '../columns';
+import { formatCell } from '../cells';
+import { COLUMNS, type Column } from '../columns';
 import type { LineUpVariety } from '../model';
 
 type Values = Record<string, string | boolean | string[]>;
