@@ -38,6 +38,19 @@ export function environment(): Environment {
   }
   const value = result.data;
   const address = (value.HILUM_ADDRESS ?? `http://${value.HOST}:${value.PORT}`).replace(/\/$/, '');
-  parsed = { ...value, address, showOutbox: value.HILUM_SHOW_OUTBOX ?? value.NODE_ENV !== 'production' };
+  parsed = {
+    ...value,
+    address,
+    showOutbox: value.HILUM_SHOW_OUTBOX ?? (value.NODE_ENV !== 'production' || isTriedOut(value, address)),
+  };
   return parsed;
+}
+
+/**
+ * A server that only this machine reaches and that can send no mail is being tried out: without the outbox nobody could open an
+ * invitation. Anything others reach shows it only when asked to.
+ */
+function isTriedOut({ HOST, SMTP_URL }: { HOST: string; SMTP_URL?: string }, address: string): boolean {
+  const loopback = /^(localhost|127(\.\d+){3}|::1|\[::1\])$/;
+  return !SMTP_URL && loopback.test(HOST) && loopback.test(new URL(address).hostname);
 }
