@@ -1,7 +1,8 @@
 import { eq } from 'drizzle-orm';
 import { database } from '@/db/client';
-import { dealerships, operations, people } from '@/db/schema';
+import { operations, people } from '@/db/schema';
 import type { Viewer } from '@/features/accounts/model';
+import { viewerOfPerson } from '@/features/accounts/viewer-of-person';
 import { scoreOperation } from '@/features/placement/changes/score';
 import { fillFromPicks } from '@/features/plans/changes/rows';
 import { agree, propose } from '@/features/plans/changes/steps';
@@ -14,21 +15,10 @@ type AccountKey = (typeof DEMO_ACCOUNTS)[number]['key'];
 
 async function viewerOf(key: AccountKey): Promise<Viewer> {
   const account = DEMO_ACCOUNTS.find((one) => one.key === key) as (typeof DEMO_ACCOUNTS)[number];
-  const [row] = await database()
-    .select({
-      personId: people.id,
-      dealershipId: people.dealershipId,
-      dealershipName: dealerships.name,
-      season: dealerships.currentSeason,
-      role: people.role,
-      name: people.name,
-      email: people.email,
-    })
-    .from(people)
-    .innerJoin(dealerships, eq(dealerships.id, people.dealershipId))
-    .where(eq(people.email, account.email));
-  if (!row) throw new Error(`The demo has no ${account.email}.`);
-  return row;
+  const [person] = await database().select({ id: people.id }).from(people).where(eq(people.email, account.email));
+  const viewer = person ? await viewerOfPerson(person.id) : null;
+  if (!viewer) throw new Error(`The demo has no ${account.email}.`);
+  return viewer;
 }
 
 async function operationId(key: (typeof DEMO_OPERATIONS)[number]['key']): Promise<string> {

@@ -1,26 +1,10 @@
-import type { BushType, CystSource, Height, Rating, Release, Tolerance } from '@/features/placement/engine/model';
+import type { Release, VarietyProfile } from '@/features/placement/engine/model';
 
-/** What a line-up says of a variety. Ratings 1 to 9, 9 best; `null` is not rated. */
-export interface VarietyTraits {
-  code: string;
-  relativeMaturity: number;
-  height: Height | null;
-  bushType: BushType | null;
-  standability: Rating;
-  emergence: Rating;
-  phytophthoraGenes: string[];
-  phytophthora: Rating;
-  suddenDeath: Rating;
-  brownStemRot: Rating;
-  whiteMould: Rating;
-  frogeye: Rating;
-  stemCanker: Rating;
-  charcoalRot: Rating;
-  ironChlorosis: Rating;
-  drought: Rating;
-  cystNematodeSource: CystSource | null;
-  tolerances: Tolerance[];
-  release: Release;
+/** What the engine reads of a variety that belongs to its seed, its supply or its trials, not to the line-up's traits. */
+type NotATrait = 'id' | 'seedsPerLb' | 'germinationPercent' | 'unitsOnHand' | 'trialAdvantage' | 'trialAdvantageStandardError';
+
+/** What a line-up says of a variety: the engine's traits and a note. Ratings 1 to 9, 9 best; `null` is not rated. */
+export interface VarietyTraits extends Omit<VarietyProfile, NotATrait> {
   note: string | null;
 }
 

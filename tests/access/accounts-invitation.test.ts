@@ -9,7 +9,7 @@ import { createManager } from '@/features/accounts/create-manager';
 import { acceptInvitation, openInvitation } from '@/features/accounts/invitation';
 import { askPasswordReset, passwordResetIsOpen } from '@/features/accounts/password-reset';
 import { personOfSession, SESSION_COOKIE_NAME } from '@/features/accounts/sessions';
-import { viewerOfPerson } from '@/features/accounts/viewer';
+import { viewerOfPerson } from '@/features/accounts/viewer-of-person';
 import { createId, sha256 } from '@/lib/ids';
 import { aDealership, anOperation, aPerson, signInCookie } from '../support/viewers';
 

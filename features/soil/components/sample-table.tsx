@@ -58,8 +58,8 @@ export function SampleTable({
           <tr>
             <Th>Sample</Th>
             <Th>Field</Th>
-            <Th>Sampled</Th>
-            <Th>Depth, in</Th>
+            <Th className="max-sm:hidden">Sampled</Th>
+            <Th className="max-sm:hidden">Depth, in</Th>
             {figures.map((figure) => (
               <Th key={figure.head} numeric>
                 {figure.head}
@@ -87,11 +87,11 @@ export function SampleTable({
                   </span>
                 ) : null}
               </Td>
-              <Td className="min-w-36">{whereWords(sample, sample.fieldId ? (names.get(sample.fieldId) ?? null) : null)}</Td>
-              <Td className="whitespace-nowrap">
+              <Td className="sm:min-w-36">{whereWords(sample, sample.fieldId ? (names.get(sample.fieldId) ?? null) : null)}</Td>
+              <Td className="whitespace-nowrap max-sm:hidden">
                 {sample.sampledYearOnly ? sample.sampledOn?.slice(0, 4) : formatDate(sample.sampledOn)}
               </Td>
-              <Td className="whitespace-nowrap">
+              <Td className="whitespace-nowrap max-sm:hidden">
                 {sample.depthInches ? `${formatNumber(sample.depthInches[0])}–${formatNumber(sample.depthInches[1])}` : '—'}
               </Td>
               {figures.map((figure) => (

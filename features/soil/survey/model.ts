@@ -1,25 +1,8 @@
 import type { MultiPolygon, Polygon } from 'geojson';
-import type { DrainageClass, FloodingFrequency } from '@/features/placement/engine/model';
+import type { SoilMapUnit } from '../model';
 
-/** A map unit's part of a field, as the survey describes it. `null` is not said. */
-export interface SurveyUnit {
-  mapUnitKey: string;
-  symbol: string;
-  name: string;
-  geometry: Polygon | MultiPolygon;
-  areaAcres: number;
-  /** Share of the field, 0..1. */
-  share: number;
-  drainage: DrainageClass | null;
-  hydrologicGroup: string | null;
-  slopePercent: number | null;
-  /** Plant-available water 0–100 cm, inches. */
-  availableWaterInches: number | null;
-  flooding: FloodingFrequency | null;
-  /** 0–30 cm. */
-  surfacePh: number | null;
-  surfaceCarbonatePercent: number | null;
-}
+/** A map unit's part of a field, as the survey describes it, before it is kept. */
+export type SurveyUnit = Omit<SoilMapUnit, 'id' | 'fieldId'>;
 
 export interface SurveyedField {
   id: string;
